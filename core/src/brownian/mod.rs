@@ -1,0 +1,1 @@
+//! The law of Brownian motion with drift and of its extremes.

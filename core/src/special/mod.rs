@@ -1,0 +1,16 @@
+//! Functions that know nothing of Brownian motion: exponentials, logarithms, the normal law and its tails.
+
+mod exponential;
+mod logarithm;
+mod mills;
+mod normal;
+mod quantile;
+
+pub(crate) use exponential::exp_sum;
+pub use exponential::{exp, expm1};
+pub(crate) use logarithm::ln_ratio_lane;
+pub use logarithm::{ln, ln_ratio, log1p};
+pub use mills::mills_ratio;
+pub(crate) use mills::mills_ratio_lane;
+pub use normal::{normal_cdf, normal_log_tail, normal_pdf, normal_tail};
+pub use quantile::normal_quantile;
