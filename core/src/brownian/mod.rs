@@ -1,1 +1,7 @@
 //! The law of Brownian motion with drift and of its extremes.
+
+mod discounted;
+mod strip;
+
+pub(crate) use discounted::{DiscountedPassage, Form};
+pub(crate) use strip::{Edge, density};

@@ -18,16 +18,12 @@ pub(crate) trait Lane:
     fn splat(value: f64) -> Self;
     /// `self * factor + summand`, rounded twice.
     fn mul_add(self, factor: Self, summand: Self) -> Self;
-    /// Square root.
-    fn sqrt(self) -> Self;
     /// Magnitude.
     fn abs(self) -> Self;
     /// Whether `self < other`; false where either is NaN.
     fn less(self, other: Self) -> Self::Mask;
     /// `yes` where the mask is true, `no` elsewhere.
     fn select(mask: Self::Mask, yes: Self, no: Self) -> Self;
-    /// True where both are.
-    fn both(a: Self::Mask, b: Self::Mask) -> Self::Mask;
     /// `2^exponent` for a whole `exponent` from -1022 to 1023.
     fn two_to(exponent: Self) -> Self;
     /// `self` split into a significand in [1, 2) and a whole exponent; `self` is positive and normal.
@@ -68,10 +64,6 @@ impl Lane for f64 {
         self * factor + summand
     }
     #[inline(always)]
-    fn sqrt(self) -> f64 {
-        libm::sqrt(self)
-    }
-    #[inline(always)]
     fn abs(self) -> f64 {
         f64::abs(self)
     }
@@ -82,10 +74,6 @@ impl Lane for f64 {
     #[inline(always)]
     fn select(mask: bool, yes: f64, no: f64) -> f64 {
         if mask { yes } else { no }
-    }
-    #[inline(always)]
-    fn both(a: bool, b: bool) -> bool {
-        a & b
     }
     #[inline(always)]
     fn two_to(exponent: f64) -> f64 {

@@ -1,25 +1,19 @@
 //! Values and Greeks of single contracts, watched continuously.
+//!
+//! A contract is a short sum of legs ([`legs`]); a leg is a payoff under an event ([`event`]) or cash at the hit
+//! ([`hit`]); a payoff under an event is one or two straight lines paid in strips ([`strip`]), plain or mirrored
+//! at the barrier ([`sensitivity`]).
 
+mod event;
 mod greeks;
+mod hit;
+mod legs;
 mod profile;
+mod sensitivity;
+mod setting;
+mod strip;
+mod valuation;
 
 pub use greeks::Greeks;
 pub use profile::{BarrierProfile, barrier_profile};
-
-use crate::error::{Error, Result, Status};
-use crate::terms::{Market, TermSheet};
-
-/// Value of a contract.
-///
-/// # Errors
-pub fn price(sheet: &TermSheet, market: &Market) -> Result<f64> {
-    greeks(sheet, market).map(|greeks| greeks.value)
-}
-
-/// Value and all Greeks of a contract, analytic, in one pass.
-///
-/// # Errors
-pub fn greeks(sheet: &TermSheet, market: &Market) -> Result<Greeks> {
-    let (_sheet, _market) = (sheet.checked()?, market.checked()?);
-    Err(Error { status: Status::Overflow, value: 0.0 })
-}
+pub use valuation::{greeks, price};

@@ -1,11 +1,12 @@
 //! The exponential function.
 
+use core::f64::consts::LOG2_E;
+
 use crate::num::{Lane, horner};
 
 /// ln 2 in two parts; the first has 32 bits, so that its product with an exponent is exact.
 const LN2_HIGH: f64 = 0.6931471803691238;
 const LN2_LOW: f64 = 1.9082149292705877e-10;
-const LOG2_E: f64 = 1.4426950408889634;
 
 /// `(exp(r) - 1 - r) / r^2` for `|r| <= ln(2) / 2`; Chebyshev fit of degree 10 in 60 digits, relative
 /// error of the exponential 2.4e-19.

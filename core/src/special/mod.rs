@@ -8,9 +8,9 @@ mod quantile;
 
 pub(crate) use exponential::exp_sum;
 pub use exponential::{exp, expm1};
-pub(crate) use logarithm::ln_ratio_lane;
 pub use logarithm::{ln, ln_ratio, log1p};
 pub use mills::mills_ratio;
 pub(crate) use mills::mills_ratio_lane;
+pub(crate) use normal::INV_ROOT_TWO_PI;
 pub use normal::{normal_cdf, normal_log_tail, normal_pdf, normal_tail};
 pub use quantile::normal_quantile;

@@ -1,0 +1,95 @@
+//! Which payoff, under which event, a contract is made of: the table that turns a term sheet into formulas.
+
+use crate::price::event::{self, Event, Levels};
+use crate::price::hit;
+use crate::price::sensitivity::Sensitivity;
+use crate::price::setting::Setting;
+use crate::terms::{Contract, Direction, Knock, Payoff, RebatePaid, TermSheet};
+
+/// What one leg pays.
+#[derive(Clone, Copy, Debug)]
+enum Pays {
+    /// A payoff at expiry, under an event.
+    AtExpiry(Payoff, Event),
+    /// Cash at the moment of touching.
+    AtHit,
+    /// Cash now.
+    Now,
+}
+
+/// An amount of something paid.
+#[derive(Clone, Copy, Debug)]
+pub(crate) struct Leg {
+    amount: f64,
+    pays: Pays,
+}
+
+/// Nothing.
+const NONE: Leg = Leg { amount: 0.0, pays: Pays::Now };
+
+/// Whether the barrier is touched as the spot stands.
+pub(crate) fn touched_now(sheet: &TermSheet, spot: f64) -> bool {
+    match sheet.contract.direction() {
+        None => false,
+        Some(Direction::Up) => spot >= sheet.barrier,
+        Some(Direction::Down) => spot <= sheet.barrier,
+    }
+}
+
+impl Leg {
+    /// The legs of a contract: its payoff and its rebate.
+    pub(crate) fn of(sheet: &TermSheet, spot: f64) -> [Leg; 2] {
+        let paid = |event| Leg { amount: 1.0, pays: event };
+        let rebate = |event| Leg { amount: sheet.rebate, pays: Pays::AtExpiry(Payoff::Cash, event) };
+        let rebate_touched = match sheet.rebate_paid {
+            RebatePaid::Hit => Leg { amount: sheet.rebate, pays: Pays::AtHit },
+            RebatePaid::Expiry => rebate(Event::Touched),
+        };
+        let legs = match sheet.contract {
+            Contract::Vanilla(payoff) => [paid(Pays::AtExpiry(payoff, Event::Always)), NONE],
+            Contract::Knock(_, Knock::Out, payoff) => [paid(Pays::AtExpiry(payoff, Event::Untouched)), rebate_touched],
+            Contract::Knock(_, Knock::In, payoff) => {
+                [paid(Pays::AtExpiry(payoff, Event::Touched)), rebate(Event::Untouched)]
+            }
+            Contract::OneTouch(_) => [rebate_touched, NONE],
+            Contract::NoTouch(_) => [rebate(Event::Untouched), NONE],
+        };
+        if touched_now(sheet, spot) { legs.map(Leg::once_touched) } else { legs }
+    }
+
+    /// What is left of a leg when the barrier has been touched.
+    fn once_touched(self) -> Leg {
+        match self.pays {
+            Pays::AtExpiry(payoff, Event::Touched) => Leg { pays: Pays::AtExpiry(payoff, Event::Always), ..self },
+            Pays::AtExpiry(_, Event::Untouched) => NONE,
+            Pays::AtHit => Leg { pays: Pays::Now, ..self },
+            Pays::AtExpiry(_, Event::Always) | Pays::Now => self,
+        }
+    }
+
+    /// Value of the leg.
+    pub(crate) fn value(self, setting: &Setting, levels: &Levels) -> f64 {
+        if self.amount == 0.0 {
+            return 0.0;
+        }
+        self.amount
+            * match self.pays {
+                Pays::AtExpiry(payoff, event) => event::value(setting, levels, payoff, event),
+                Pays::AtHit => hit::value(setting, levels),
+                Pays::Now => 1.0,
+            }
+    }
+
+    /// Value and derivatives of the leg.
+    pub(crate) fn sensitivity(self, setting: &Setting, levels: &Levels) -> Sensitivity {
+        if self.amount == 0.0 {
+            return Sensitivity::default();
+        }
+        let unit = match self.pays {
+            Pays::AtExpiry(payoff, event) => event::sensitivity(setting, levels, payoff, event),
+            Pays::AtHit => hit::sensitivity(setting, levels),
+            Pays::Now => Sensitivity { value: 1.0, ..Sensitivity::default() },
+        };
+        unit * self.amount
+    }
+}
