@@ -1,1 +1,21 @@
-//! Placeholder.
+//! Repricing a book of contracts: from CSV to CSV, with a summary that a trader can read.
+//!
+//! The programs are in `src/bin`; here are their parts, in the order in which a row passes through them.
+
+pub mod demo_book;
+
+mod block;
+mod field;
+mod number;
+mod parity;
+mod refusal;
+mod reprice;
+mod summary;
+
+pub use reprice::{Failure, HEADER, reprice};
+pub use summary::Summary;
+
+/// The Rust in the README, compiled and run as a documentation test.
+#[cfg(doctest)]
+#[doc = include_str!("../../README.md")]
+pub struct Readme;
