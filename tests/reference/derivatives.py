@@ -96,7 +96,9 @@ def greeks(row):
     for name, (sign, fields) in GREEKS.items():
         result = coarse.derivative(fields)
         other = fine.derivative(fields)
-        assert abs(result - other) <= arb(10) ** -30 * abs(other), (row, name, result.str(40), other.str(40))
+        # The two have different noise below which they are 0, both far below binary64.
+        allowed = arb(10) ** -30 * abs(other) + arb(10) ** -320
+        assert abs(result - other) <= allowed, (row, name, result.str(40), other.str(40))
         answers[name] = sign * result, coarse.scale(fields)
     x, value = coarse.x, coarse.at({})
     parts = [
