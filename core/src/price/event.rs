@@ -7,11 +7,14 @@
 //! untouched = live - image(live),   touched = beyond + image(live)
 //! ```
 //!
-//! so that the touched event is computed directly, from two positive claims, and not as a difference.
+//! so that the touched event is computed directly, from two positive claims, and not as a difference. The code
+//! departs from it where the difference cancels: the untouched event is then one integral ([`positive`]).
 
+use crate::price::positive;
 use crate::price::sensitivity::Sensitivity;
 use crate::price::setting::Setting;
-use crate::price::strip::{End, Level, Line, Strip};
+use crate::price::strip::{End, Level, Line, Strip, Sum};
+use crate::special::Functions;
 use crate::terms::{Direction, Payoff};
 
 /// Strike and barrier of one contract, and the side that the barrier is on.
@@ -93,7 +96,7 @@ impl Levels {
     }
 
     /// The payoff in the law of the spot.
-    fn plain(&self, setting: &Setting, payoff: Payoff, ends: Ends) -> Strip {
+    fn plain<R: Functions>(&self, setting: &Setting<R>, payoff: Payoff, ends: Ends) -> Strip<R> {
         // A forward on the strike is half in the money, the limit of small volatility; on the barrier it touches.
         let tie = |level: Level| match (level, self.direction) {
             (Level::Strike, _) => 0.5,
@@ -105,14 +108,24 @@ impl Levels {
     }
 
     /// The payoff in the image law; none without volatility, as the spot then never returns from the barrier.
-    fn image(&self, setting: &Setting, payoff: Payoff) -> Option<Strip> {
+    fn image<R: Functions>(&self, setting: &Setting<R>, payoff: Payoff) -> Option<Strip<R>> {
         let ends = if setting.still { None } else { self.cut(payoff, self.live()) }?;
         let end = |level: Level| End::image(setting, self.barrier, level, self.at(level));
         Some(Strip { line: line(payoff, self.strike), lower: ends.0.map(end), upper: ends.1.map(end) })
     }
 
-    fn plain_side(&self, setting: &Setting, payoff: Payoff, side: Side) -> Option<Strip> {
+    /// The payoff in the law of the spot, on one side of the barrier.
+    fn plain_side<R: Functions>(&self, setting: &Setting<R>, payoff: Payoff, side: Side) -> Option<Strip<R>> {
         self.cut(payoff, side).map(|ends| self.plain(setting, payoff, ends))
+    }
+
+    /// The worth of a payoff if the barrier is never touched.
+    fn untouched<R: Functions>(&self, setting: &Setting<R>, payoff: Payoff) -> R {
+        let Some(live) = self.plain_side(setting, payoff, self.live()) else { return R::of(0.0) };
+        let Some(image) = self.image(setting, payoff) else { return live.value(setting) };
+        let (plain, mirrored) = (live.closed(setting), image.closed(setting));
+        let sum = Sum { value: plain.value - mirrored.value, terms: plain.terms + mirrored.terms };
+        if sum.cancelled() { positive::value(setting, &live, Some(self.barrier)) } else { sum.value }
     }
 }
 
@@ -125,40 +138,38 @@ pub(crate) enum Event {
 }
 
 /// Value of a payoff under an event.
-pub(crate) fn value(setting: &Setting, levels: &Levels, payoff: Payoff, event: Event) -> f64 {
-    let worth = |strip: Option<Strip>| strip.map_or(0.0, |strip| strip.value(setting));
-    match event {
+pub(crate) fn value<R: Functions>(setting: &Setting<R>, levels: &Levels, payoff: Payoff, event: Event) -> R {
+    let worth = |strip: Option<Strip<R>>| strip.map_or(R::of(0.0), |strip| strip.value(setting));
+    let value = match event {
         Event::Always => levels.plain(setting, payoff, everywhere(payoff)).value(setting),
         Event::Touched => {
             worth(levels.plain_side(setting, payoff, levels.beyond())) + worth(levels.image(setting, payoff))
         }
-        Event::Untouched => {
-            positive(worth(levels.plain_side(setting, payoff, levels.live())) - worth(levels.image(setting, payoff)))
-        }
-    }
+        Event::Untouched => levels.untouched(setting, payoff),
+    };
+    // Without volatility a strike at the forward leaves the rounding of a difference.
+    value.larger(R::of(0.0))
 }
 
 /// Value and derivatives of a payoff under an event.
-pub(crate) fn sensitivity(setting: &Setting, levels: &Levels, payoff: Payoff, event: Event) -> Sensitivity {
+pub(crate) fn sensitivity<R: Functions>(
+    setting: &Setting<R>,
+    levels: &Levels,
+    payoff: Payoff,
+    event: Event,
+) -> Sensitivity<R> {
     let plain = |side| {
-        levels.plain_side(setting, payoff, side).map_or(Sensitivity::default(), |strip| strip.sensitivity(setting))
+        let strip = levels.plain_side(setting, payoff, side);
+        strip.map_or_else(Sensitivity::none, |strip| strip.sensitivity(setting))
     };
     let image = || {
-        levels
-            .image(setting, payoff)
-            .map_or(Sensitivity::default(), |strip| strip.sensitivity(setting).reflected(setting, levels.barrier))
+        let strip = levels.image(setting, payoff);
+        strip.map_or_else(Sensitivity::none, |strip| strip.sensitivity(setting).reflected(setting, levels.barrier))
     };
-    match event {
+    let sum = match event {
         Event::Always => levels.plain(setting, payoff, everywhere(payoff)).sensitivity(setting),
         Event::Touched => plain(levels.beyond()) + image(),
-        Event::Untouched => {
-            let sum = plain(levels.live()) + image() * -1.0;
-            Sensitivity { value: positive(sum.value), ..sum }
-        }
-    }
-}
-
-/// Rounding may leave a vanishing knock-out just below nothing.
-fn positive(value: f64) -> f64 {
-    if value < 0.0 { 0.0 } else { value }
+        Event::Untouched => plain(levels.live()) - image(),
+    };
+    Sensitivity { value: value(setting, levels, payoff, event), ..sum }
 }

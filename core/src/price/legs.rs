@@ -4,6 +4,7 @@ use crate::price::event::{self, Event, Levels};
 use crate::price::hit;
 use crate::price::sensitivity::Sensitivity;
 use crate::price::setting::Setting;
+use crate::special::Functions;
 use crate::terms::{Contract, Direction, Knock, Payoff, RebatePaid, TermSheet};
 
 /// What one leg pays.
@@ -68,28 +69,28 @@ impl Leg {
     }
 
     /// Value of the leg.
-    pub(crate) fn value(self, setting: &Setting, levels: &Levels) -> f64 {
+    pub(crate) fn value<R: Functions>(self, setting: &Setting<R>, levels: &Levels) -> R {
         if self.amount == 0.0 {
-            return 0.0;
+            return R::of(0.0);
         }
-        self.amount
-            * match self.pays {
-                Pays::AtExpiry(payoff, event) => event::value(setting, levels, payoff, event),
-                Pays::AtHit => hit::value(setting, levels),
-                Pays::Now => 1.0,
-            }
+        let unit = match self.pays {
+            Pays::AtExpiry(payoff, event) => event::value(setting, levels, payoff, event),
+            Pays::AtHit => hit::value(setting, levels),
+            Pays::Now => R::of(1.0),
+        };
+        unit.times(self.amount)
     }
 
     /// Value and derivatives of the leg.
-    pub(crate) fn sensitivity(self, setting: &Setting, levels: &Levels) -> Sensitivity {
+    pub(crate) fn sensitivity<R: Functions>(self, setting: &Setting<R>, levels: &Levels) -> Sensitivity<R> {
         if self.amount == 0.0 {
-            return Sensitivity::default();
+            return Sensitivity::none();
         }
         let unit = match self.pays {
             Pays::AtExpiry(payoff, event) => event::sensitivity(setting, levels, payoff, event),
             Pays::AtHit => hit::sensitivity(setting, levels),
-            Pays::Now => Sensitivity { value: 1.0, ..Sensitivity::default() },
+            Pays::Now => Sensitivity { value: R::of(1.0), ..Sensitivity::none() },
         };
-        unit * self.amount
+        unit.times(self.amount)
     }
 }

@@ -8,7 +8,9 @@ mod event;
 mod greeks;
 mod hit;
 mod legs;
+mod positive;
 mod profile;
+mod reference;
 mod sensitivity;
 mod setting;
 mod strip;
@@ -16,4 +18,5 @@ mod valuation;
 
 pub use greeks::Greeks;
 pub use profile::{BarrierProfile, barrier_profile};
+pub use reference::{reference_greeks, reference_price};
 pub use valuation::{greeks, price};

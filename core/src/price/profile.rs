@@ -49,7 +49,7 @@ pub fn barrier_profile(sheet: &TermSheet, market: &Market) -> Result<BarrierProf
         return Ok(BarrierProfile { touch_probability: 1.0, distance: 0.0, gap });
     }
     let levels = Levels { direction, strike: sheet.barrier, barrier: sheet.barrier };
-    let setting = Setting::undiscounted(&market, sheet.expiry);
+    let setting = Setting::<f64>::undiscounted(&market, sheet.expiry);
     let touch_probability = event::value(&setting, &levels, Payoff::Cash, Event::Touched).min(1.0);
     let distance = ln_ratio(sheet.barrier, market.spot).abs() / (market.vol * libm::sqrt(sheet.expiry));
     Ok(BarrierProfile { touch_probability, distance, gap })

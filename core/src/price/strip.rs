@@ -4,12 +4,14 @@
 //! `shares S e^(-qT) [N(d1)] - cash e^(-rT) [N(d2)]`, the brackets being differences between the two ends.
 //! The code departs from it in taking each bracket on the side where its tails are small, and in writing every
 //! derivative as what the slope of the line and its jump at each end contribute, so that the Gaussians of the
-//! share and of the cash, equal on paper, never have to cancel.
+//! share and of the cash, equal on paper, never have to cancel. Where the value itself cancels, it is integrated
+//! ([`crate::price::positive`]).
 
 use crate::brownian::{Edge, density};
+use crate::price::positive;
 use crate::price::sensitivity::Sensitivity;
 use crate::price::setting::Setting;
-use crate::special::{exp, ln_ratio};
+use crate::special::Functions;
 
 /// `shares X - cash`, and how `cash` moves with the strike.
 #[derive(Clone, Copy, Debug)]
@@ -29,134 +31,161 @@ pub(crate) enum Level {
 
 /// One end of a strip: the worth of cash and of a share above and below it, and the density there.
 #[derive(Clone, Copy, Debug)]
-pub(crate) struct End {
-    level: Level,
-    at: f64,
-    cash: Edge<f64>,
-    share: Edge<f64>,
+pub(crate) struct End<R> {
+    pub(crate) level: Level,
+    pub(crate) at: f64,
+    cash: Edge<R>,
+    share: Edge<R>,
     /// `e^(-rT) phi(d2)`; the share's is `at` times this.
-    density: f64,
-    d1: f64,
-    d2: f64,
+    pub(crate) density: R,
+    pub(crate) d1: R,
+    pub(crate) d2: R,
 }
 
-impl End {
+impl<R: Functions> End<R> {
     /// In the law of the spot at expiry; `tie` is the part of a mass lying exactly on the end that counts as above.
-    pub(crate) fn plain(setting: &Setting, level: Level, at: f64, tie: f64) -> End {
-        let distance = ln_ratio(setting.spot, at) + setting.carry * setting.expiry;
+    pub(crate) fn plain(setting: &Setting<R>, level: Level, at: f64, tie: f64) -> End<R> {
+        let distance = R::ln_ratio(setting.spot, at) + setting.carry * setting.expiry;
         if setting.still {
             return End::still(setting, level, at, distance, tie);
         }
-        let d2 = distance / setting.deviation - 0.5 * setting.deviation;
-        let density = density(-0.5 * d2 * d2 - setting.rate * setting.expiry);
+        let d2 = distance / setting.deviation - setting.deviation.times(0.5);
+        let density = density(d2.square().times(-0.5) - setting.rate * setting.expiry);
         End::new(setting, level, at, d2, density, [setting.bond, setting.share])
     }
 
     /// In the image of that law which the barrier casts: the law from `barrier^2 / spot`, weighted by
     /// `(barrier / spot)^(2 carry / vol^2 - 1)`. `at` lies on the spot's side of the barrier or on it.
-    pub(crate) fn image(setting: &Setting, barrier: f64, level: Level, at: f64) -> End {
-        let Setting { spot, vol, rate, dividend, expiry, carry, deviation, .. } = *setting;
-        let to_barrier = ln_ratio(barrier, spot);
-        let beyond = ln_ratio(barrier, at);
-        let plain = (ln_ratio(spot, at) + carry * expiry) / deviation - 0.5 * deviation;
-        let d2 = (to_barrier + beyond + carry * expiry) / deviation - 0.5 * deviation;
-        let density =
-            density(-0.5 * plain * plain - rate * expiry - 2.0 * (to_barrier / deviation) * (beyond / deviation));
-        let power = 2.0 * carry / (vol * vol);
-        let bond = exp(to_barrier * (power - 1.0) - rate * expiry);
-        let share = spot * exp(to_barrier * (power + 1.0) - dividend * expiry);
+    pub(crate) fn image(setting: &Setting<R>, barrier: f64, level: Level, at: f64) -> End<R> {
+        let Setting { spot, rate, dividend, expiry, carry, variance, deviation, .. } = *setting;
+        let to_barrier = R::ln_ratio(barrier, spot);
+        let beyond = R::ln_ratio(barrier, at);
+        let plain = (R::ln_ratio(spot, at) + carry * expiry) / deviation - deviation.times(0.5);
+        let d2 = (to_barrier + beyond + carry * expiry) / deviation - deviation.times(0.5);
+        let reflection = (to_barrier / deviation) * (beyond / deviation);
+        let density = density(plain.square().times(-0.5) - rate * expiry - reflection.times(2.0));
+        let power = carry.times(2.0) / variance;
+        let one = R::of(1.0);
+        let bond = (to_barrier * (power - one) - rate * expiry).exp();
+        let share = (to_barrier * (power + one) - dividend * expiry).exp().times(spot);
         End::new(setting, level, at, d2, density, [bond, share])
     }
 
-    fn new(setting: &Setting, level: Level, at: f64, d2: f64, density: f64, [bond, share]: [f64; 2]) -> End {
+    fn new(setting: &Setting<R>, level: Level, at: f64, d2: R, density: R, [bond, share]: [R; 2]) -> End<R> {
         let d1 = d2 + setting.deviation;
-        End {
-            level,
-            at,
-            cash: Edge::new(d2, density, bond),
-            share: Edge::new(d1, at * density, share),
-            density,
-            d1,
-            d2,
-        }
+        let (cash, share) = (Edge::new(d2, density, bond), Edge::new(d1, density.times(at), share));
+        End { level, at, cash, share, density, d1, d2 }
     }
 
     /// Without volatility all mass is at the forward.
-    fn still(setting: &Setting, level: Level, at: f64, distance: f64, tie: f64) -> End {
-        let above = if distance > 0.0 {
+    fn still(setting: &Setting<R>, level: Level, at: f64, distance: R, tie: f64) -> End<R> {
+        let zero = R::of(0.0);
+        let above = if distance > zero {
             1.0
-        } else if distance < 0.0 {
+        } else if distance < zero {
             0.0
         } else {
             tie
         };
-        let edge = |total: f64| Edge { above: total * above, below: total * (1.0 - above) };
-        End { level, at, cash: edge(setting.bond), share: edge(setting.share), density: 0.0, d1: 0.0, d2: 0.0 }
+        let edge = |total: R| Edge { above: total.times(above), below: total.times(1.0 - above) };
+        End { level, at, cash: edge(setting.bond), share: edge(setting.share), density: zero, d1: zero, d2: zero }
     }
 }
 
 /// A straight line paid in a strip; an end that is not there is at 0 or at infinity.
 #[derive(Clone, Copy, Debug)]
-pub(crate) struct Strip {
+pub(crate) struct Strip<R> {
     pub(crate) line: Line,
-    pub(crate) lower: Option<End>,
-    pub(crate) upper: Option<End>,
+    pub(crate) lower: Option<End<R>>,
+    pub(crate) upper: Option<End<R>>,
 }
 
-impl Strip {
-    /// Worth of the shares and of the cash.
-    fn legs(&self, setting: &Setting) -> (f64, f64) {
+/// A value from a closed form, and the magnitude of the terms that it is the sum of.
+#[derive(Clone, Copy, Debug)]
+pub(crate) struct Sum<R> {
+    pub(crate) value: R,
+    pub(crate) terms: R,
+}
+
+impl<R: Functions> Sum<R> {
+    /// Whether the terms have cancelled so far that the value needs another form.
+    pub(crate) fn cancelled(self) -> bool {
+        self.value < self.terms.times(R::CANCELLED)
+    }
+}
+
+impl<R: Functions> Strip<R> {
+    /// Worth of the shares and of the cash, each with the magnitude of its terms.
+    fn legs(&self, setting: &Setting<R>) -> [Sum<R>; 2] {
+        let one = |worth: R| (worth, worth);
         let (share, cash) = match (&self.lower, &self.upper) {
-            (None, None) => (setting.share, setting.bond),
-            (Some(lower), None) => (lower.share.above, lower.cash.above),
-            (None, Some(upper)) => (upper.share.below, upper.cash.below),
+            (None, None) => (one(setting.share), one(setting.bond)),
+            (Some(lower), None) => (one(lower.share.above), one(lower.cash.above)),
+            (None, Some(upper)) => (one(upper.share.below), one(upper.cash.below)),
             (Some(lower), Some(upper)) => {
                 (Edge::between(lower.share, upper.share), Edge::between(lower.cash, upper.cash))
             }
         };
         // A leg that is not held must not turn an overflow of its worth into NaN.
-        let held = |amount: f64, worth: f64| if amount == 0.0 { 0.0 } else { amount * worth };
-        (held(self.line.shares, share), held(self.line.cash, cash))
+        let held = |amount: f64, (value, terms): (R, R)| {
+            if amount == 0.0 {
+                Sum { value: R::of(0.0), terms: R::of(0.0) }
+            } else {
+                Sum { value: value.times(amount), terms: terms.times(amount.abs()) }
+            }
+        };
+        [held(self.line.shares, share), held(self.line.cash, cash)]
     }
 
-    pub(crate) fn value(&self, setting: &Setting) -> f64 {
-        let (share, cash) = self.legs(setting);
-        share - cash
+    /// The value by the closed form.
+    pub(crate) fn closed(&self, setting: &Setting<R>) -> Sum<R> {
+        let [share, cash] = self.legs(setting);
+        Sum { value: share.value - cash.value, terms: share.terms + cash.terms }
     }
 
-    pub(crate) fn sensitivity(&self, setting: &Setting) -> Sensitivity {
-        let Setting { vol, rate, dividend, expiry, carry, root_expiry, deviation, .. } = *setting;
-        let (share, cash) = self.legs(setting);
-        let mut sum = Sensitivity { value: share - cash, ..Sensitivity::default() };
-        let mut jumps = 0.0;
+    /// The value, by whichever form keeps its digits.
+    pub(crate) fn value(&self, setting: &Setting<R>) -> R {
+        let sum = self.closed(setting);
+        if !setting.still && sum.cancelled() { positive::value(setting, self, None) } else { sum.value }
+    }
+
+    /// The derivatives, with the value by the closed form.
+    pub(crate) fn sensitivity(&self, setting: &Setting<R>) -> Sensitivity<R> {
+        let Setting { vol, rate, dividend, expiry, carry, variance, root_expiry, deviation, .. } = *setting;
+        let [share, cash] = self.legs(setting).map(|leg| leg.value);
+        let zero = R::of(0.0);
+        let mut sum = Sensitivity { value: share - cash, ..Sensitivity::none() };
+        let mut jumps = zero;
         for (end, sign) in [(&self.lower, 1.0), (&self.upper, -1.0)] {
             let Some(end) = end else { continue };
-            if end.density == 0.0 {
+            if end.density == zero {
                 continue;
             }
-            let held = self.line.shares * end.at;
-            let jump = held - self.line.cash;
-            let per_deviation = sign * end.density / deviation;
-            let per_vol = sign * end.density * root_expiry;
+            let held = R::of(end.at).times(self.line.shares);
+            let jump = held - R::of(self.line.cash);
+            let density = end.density.times(sign);
+            let per_deviation = density / deviation;
+            let per_vol = density * root_expiry;
             let curve = held - jump * end.d1 / deviation;
-            jumps += per_deviation * jump;
-            sum.bend += per_deviation * curve;
-            sum.slope_vol -= per_vol * (end.d2 / deviation * curve + jump / (deviation * deviation));
-            sum.vol_vol += per_vol * (end.d1 * end.d2 * curve + jump * (end.d1 + end.d2) / deviation) / vol;
+            jumps = jumps + per_deviation * jump;
+            sum.bend = sum.bend + per_deviation * curve;
+            sum.slope_vol = sum.slope_vol - per_vol * (end.d2 / deviation * curve + jump / deviation.square());
+            sum.vol_vol =
+                sum.vol_vol + per_vol * (end.d1 * end.d2 * curve + jump * (end.d1 + end.d2) / deviation) / vol;
             match end.level {
-                Level::Strike => sum.strike -= per_deviation * jump / end.at,
-                Level::Barrier => sum.log_barrier -= per_deviation * jump,
+                Level::Strike => sum.strike = sum.strike - per_deviation * jump / R::of(end.at),
+                Level::Barrier => sum.log_barrier = sum.log_barrier - per_deviation * jump,
             }
         }
         sum.slope = share + jumps;
         sum.vol = vol * expiry * sum.bend;
-        sum.time = 0.5 * vol * vol * sum.bend + rate * cash - dividend * share + carry * jumps;
-        let spread = if setting.still { 0.0 } else { 0.5 * vol / expiry * sum.slope_vol };
+        sum.time = (variance * sum.bend).times(0.5) + rate * cash - dividend * share + carry * jumps;
+        let spread = if setting.still { zero } else { (vol / expiry * sum.slope_vol).times(0.5) };
         sum.slope_time = spread + carry * sum.bend - dividend * sum.slope;
         sum.rate = expiry * (cash + jumps);
         sum.dividend = -expiry * sum.slope;
         if self.line.cash_strike != 0.0 {
-            sum.strike -= self.line.cash_strike * (cash / self.line.cash);
+            sum.strike = sum.strike - cash.times(self.line.cash_strike) / R::of(self.line.cash);
         }
         sum
     }

@@ -5,6 +5,7 @@ use crate::price::Greeks;
 use crate::price::event::Levels;
 use crate::price::legs::Leg;
 use crate::price::setting::Setting;
+use crate::special::Functions;
 use crate::terms::{Direction, Market, TermSheet};
 
 /// What a contract is worth now.
@@ -48,7 +49,7 @@ use crate::terms::{Direction, Market, TermSheet};
 /// # Ok::<(), floodmark::Error>(())
 /// ```
 pub fn price(sheet: &TermSheet, market: &Market) -> Result<f64> {
-    let (legs, setting, levels) = parts(sheet, market)?;
+    let (legs, setting, levels) = parts::<f64>(sheet, market)?;
     let value = legs[0].value(&setting, &levels) + legs[1].value(&setting, &levels);
     representable(value, value)
 }
@@ -65,12 +66,12 @@ pub fn price(sheet: &TermSheet, market: &Market) -> Result<f64> {
 ///
 /// As [`price`].
 pub fn greeks(sheet: &TermSheet, market: &Market) -> Result<Greeks> {
-    let (legs, setting, levels) = parts(sheet, market)?;
+    let (legs, setting, levels) = parts::<f64>(sheet, market)?;
     let sum = legs[0].sensitivity(&setting, &levels) + legs[1].sensitivity(&setting, &levels);
     representable(sum.value, sum.greeks(market.spot, sheet.barrier))
 }
 
-fn parts(sheet: &TermSheet, market: &Market) -> Result<([Leg; 2], Setting, Levels)> {
+pub(crate) fn parts<R: Functions>(sheet: &TermSheet, market: &Market) -> Result<([Leg; 2], Setting<R>, Levels)> {
     let (sheet, market) = (sheet.checked()?, market.checked()?);
     let levels = Levels {
         direction: sheet.contract.direction().unwrap_or(Direction::Up),
@@ -80,6 +81,6 @@ fn parts(sheet: &TermSheet, market: &Market) -> Result<([Leg; 2], Setting, Level
     Ok((Leg::of(&sheet, market.spot), Setting::new(&market, sheet.expiry), levels))
 }
 
-fn representable<V>(value: f64, answer: V) -> Result<V> {
+pub(crate) fn representable<V>(value: f64, answer: V) -> Result<V> {
     if value.is_finite() { Ok(answer) } else { Err(Error { status: Status::Overflow, value }) }
 }

@@ -1,6 +1,9 @@
 //! Functions that know nothing of Brownian motion: exponentials, logarithms, the normal law and its tails.
 
 mod exponential;
+mod extended;
+mod extended_tables;
+mod functions;
 mod logarithm;
 mod mills;
 mod normal;
@@ -8,6 +11,7 @@ mod quantile;
 
 pub(crate) use exponential::exp_sum;
 pub use exponential::{exp, expm1};
+pub(crate) use functions::Functions;
 pub use logarithm::{ln, ln_ratio, log1p};
 pub use mills::mills_ratio;
 pub(crate) use mills::mills_ratio_lane;
