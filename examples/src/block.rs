@@ -1,9 +1,8 @@
 //! A block of rows: the unit in which a book is read, valued and written, its memory used again and again.
 
 use std::collections::HashMap;
-use std::io::Read;
+use std::io::{self, Read};
 
-use csv::ByteRecord;
 use floodmark::Status;
 use floodmark::batch::{self, Book, Column, ColumnMut, GreekColumns, ProfileColumns};
 use floodmark::price::Greeks;
@@ -13,6 +12,7 @@ use crate::field::{Field, Layout};
 use crate::number::{write_number, write_text};
 use crate::parity::Parity;
 use crate::refusal::{Refusal, Rule};
+use crate::rows::{Row, Rows};
 
 /// Rows in a block: enough to pay for a call, few enough to stay in the cache.
 pub(crate) const ROWS: usize = 1024;
@@ -24,7 +24,7 @@ const NO_CONTRACT: u8 = u8::MAX;
 pub(crate) struct Block {
     /// The codes of the contracts by their text.
     codes: HashMap<String, u8>,
-    records: Vec<ByteRecord>,
+    texts: Vec<Row>,
     rows: usize,
     contract: Vec<u8>,
     rebate_paid: Vec<u8>,
@@ -41,7 +41,7 @@ pub(crate) struct Block {
 
 /// A row with its results, for whoever sums up.
 pub(crate) struct Valued<'b> {
-    /// Where the row began in the book.
+    /// The line of the book it stands on.
     pub(crate) line: u64,
     pub(crate) id: &'b [u8],
     pub(crate) contract: &'b [u8],
@@ -62,7 +62,7 @@ impl Block {
         let column = || vec![0.0; ROWS];
         Block {
             codes: contracts.map(|contract| (contract.to_string(), contract.code())).collect(),
-            records: vec![ByteRecord::new(); ROWS],
+            texts: vec![Row::default(); ROWS],
             rows: 0,
             contract: vec![NO_CONTRACT; ROWS],
             rebate_paid: vec![RebatePaid::NATURAL_CODE; ROWS],
@@ -77,13 +77,14 @@ impl Block {
     }
 
     /// Reads the next rows, as many as there are up to a block; returns how many.
-    pub(crate) fn read(&mut self, book: &mut csv::Reader<impl Read>, layout: &Layout) -> csv::Result<usize> {
+    pub(crate) fn read(&mut self, book: &mut Rows<impl Read>, layout: &Layout) -> io::Result<usize> {
         self.rows = 0;
-        while self.rows < ROWS && book.read_byte_record(&mut self.records[self.rows])? {
-            self.refusals[self.rows] = self.take(self.rows, layout).err();
-            if self.refusals[self.rows].is_some() {
+        while self.rows < ROWS && book.next(&mut self.texts[self.rows])? {
+            let taken = self.take(self.rows, layout);
+            if taken.is_err() {
                 self.contract[self.rows] = NO_CONTRACT;
             }
+            self.refusals[self.rows] = taken.err();
             self.rows += 1;
         }
         Ok(self.rows)
@@ -91,12 +92,15 @@ impl Block {
 
     /// Takes a row's texts into the columns. What is empty becomes NaN, which the core refuses where it is needed.
     fn take(&mut self, row: usize, layout: &Layout) -> Result<(), Refusal> {
-        let record = &self.records[row];
-        if record.len() != layout.width {
-            let beyond = layout.first_beyond(record.len()).map(|field| Refusal::new(Rule::Reach(field)));
-            return Err(beyond.unwrap_or_else(|| Refusal::given(Rule::Width, record.len().to_string().as_bytes())));
+        let texts = &self.texts[row];
+        if !texts.closed {
+            return Err(Refusal::new(Rule::Quotes));
         }
-        let text = |field| layout.text(record, field);
+        if texts.len() != layout.width {
+            let beyond = layout.first_beyond(texts.len()).map(|field| Refusal::new(Rule::Reach(field)));
+            return Err(beyond.unwrap_or_else(|| Refusal::given(Rule::Width, texts.len().to_string().as_bytes())));
+        }
+        let text = |field| layout.text(texts, field);
         if str::from_utf8(text(Field::Id)).is_err() {
             return Err(Refusal::given(Rule::Text, text(Field::Id)));
         }
@@ -143,7 +147,7 @@ impl Block {
         for row in 0..self.rows {
             let code = self.status[row];
             if code != Status::Ok.code() && self.refusals[row].is_none() {
-                self.refusals[row] = Some(Refusal::by_core(code, |field| layout.text(&self.records[row], field)));
+                self.refusals[row] = Some(Refusal::by_core(code, |field| layout.text(&self.texts[row], field)));
             }
         }
         let valued = (0..self.rows).filter(|&row| self.refusals[row].is_none());
@@ -153,7 +157,7 @@ impl Block {
     /// Appends a line for each row to the output.
     pub(crate) fn write(&self, layout: &Layout, out: &mut Vec<u8>) {
         for row in 0..self.rows {
-            write_text(out, String::from_utf8_lossy(layout.text(&self.records[row], Field::Id)).as_bytes());
+            write_text(out, String::from_utf8_lossy(layout.text(&self.texts[row], Field::Id)).as_bytes());
             for column in self.greeks.iter().chain([&self.touch_probability]) {
                 out.push(b',');
                 write_number(out, column[row]);
@@ -169,12 +173,12 @@ impl Block {
 
     /// A row with its results.
     pub(crate) fn row<'b>(&'b self, layout: &Layout, row: usize) -> Valued<'b> {
-        let record = &self.records[row];
+        let texts = &self.texts[row];
         let [spot, _, barrier, ..] = self.numbers.each_ref().map(|column| column[row]);
         Valued {
-            line: record.position().map_or(0, csv::Position::line),
-            id: layout.text(record, Field::Id),
-            contract: layout.text(record, Field::Contract),
+            line: texts.line,
+            id: layout.text(texts, Field::Id),
+            contract: layout.text(texts, Field::Contract),
             refusal: self.refusals[row].as_ref(),
             greeks: self.greeks.each_ref().map(|column| column[row]),
             spot,

@@ -2,7 +2,7 @@
 
 use std::fmt;
 
-use csv::ByteRecord;
+use crate::rows::Row;
 
 /// A column that a book has.
 #[derive(Clone, Copy, Debug, PartialEq, Eq, PartialOrd, Ord)]
@@ -87,7 +87,7 @@ pub(crate) struct Layout {
 
 impl Layout {
     /// Reads a header; says which column is missing or stands twice.
-    pub(crate) fn from_header(header: &ByteRecord) -> Result<Layout, String> {
+    pub(crate) fn from_header(header: &Row) -> Result<Layout, String> {
         let mut layout = Layout { positions: [None; Field::ALL.len()], width: header.len(), unread: Vec::new() };
         for (position, name) in header.iter().map(<[u8]>::trim_ascii).enumerate() {
             match Field::ALL.into_iter().find(|field| field.name().as_bytes() == name) {
@@ -108,8 +108,8 @@ impl Layout {
     }
 
     /// The text of a row in a column, without the blanks around it; empty where the row does not have it.
-    pub(crate) fn text<'r>(&self, record: &'r ByteRecord, field: Field) -> &'r [u8] {
-        self.positions[field as usize].and_then(|position| record.get(position)).unwrap_or_default().trim_ascii()
+    pub(crate) fn text<'r>(&self, row: &'r Row, field: Field) -> &'r [u8] {
+        self.positions[field as usize].and_then(|position| row.get(position)).unwrap_or_default().trim_ascii()
     }
 
     /// The first column, in the order of the header, that a row of so many fields does not reach.
@@ -122,17 +122,24 @@ impl Layout {
 #[cfg(test)]
 mod tests {
     use super::*;
+    use crate::rows::Rows;
 
     const NAMES: [&str; 11] =
         ["id", "contract", "spot", "strike", "barrier", "rebate", "rebate_paid", "expiry", "vol", "rate", "dividend"];
+
+    fn row(fields: &[&str]) -> Row {
+        let mut row = Row::default();
+        assert!(Rows::new(fields.join(",").as_bytes()).next(&mut row).unwrap());
+        row
+    }
 
     #[test]
     fn columns_are_found_by_name_in_any_order() {
         let mut names = NAMES.to_vec();
         names.reverse();
         names.insert(3, "desk");
-        let layout = Layout::from_header(&ByteRecord::from(names.clone())).unwrap();
-        let row = ByteRecord::from(names);
+        let layout = Layout::from_header(&row(&names)).unwrap();
+        let row = row(&names);
         for field in Field::ALL {
             assert_eq!(layout.text(&row, field), field.name().as_bytes());
         }
@@ -146,10 +153,10 @@ mod tests {
         for name in NAMES {
             let others: Vec<&str> = NAMES.into_iter().filter(|other| *other != name).collect();
             let twice: Vec<&str> = NAMES.into_iter().chain([name]).collect();
-            let missing = Layout::from_header(&ByteRecord::from(others)).err();
+            let missing = Layout::from_header(&row(&others)).err();
             let wanted = format!("column {name} is missing from the header");
             assert_eq!(missing, (!name.starts_with("rebate")).then_some(wanted));
-            let double = Layout::from_header(&ByteRecord::from(twice)).unwrap_err();
+            let double = Layout::from_header(&row(&twice)).unwrap_err();
             assert_eq!(double, format!("column {name} stands twice in the header"));
         }
     }

@@ -10,6 +10,7 @@ mod number;
 mod parity;
 mod refusal;
 mod reprice;
+mod rows;
 mod summary;
 
 pub use reprice::{Failure, HEADER, reprice};

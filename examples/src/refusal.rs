@@ -20,6 +20,8 @@ pub(crate) enum Rule {
     Reach(Field),
     /// The row must have as many fields as the header.
     Width,
+    /// A quote that is opened must be closed in the same line.
+    Quotes,
     /// The identifier must be text.
     Text,
     /// A rule of the core, by its number.
@@ -33,6 +35,7 @@ impl fmt::Display for Rule {
             Rule::Present(field) => write!(f, "{field} is missing"),
             Rule::Reach(field) => write!(f, "{field} is missing: the row has fewer fields than the header"),
             Rule::Width => f.write_str("the row must have as many fields as the header"),
+            Rule::Quotes => f.write_str("a quote is opened and not closed in the same line"),
             Rule::Text => f.write_str("id must be UTF-8 text"),
             Rule::Core(code) => match Status::from_code(*code) {
                 Some(status) => f.write_str(status.rule()),

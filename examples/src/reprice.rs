@@ -3,18 +3,14 @@
 use std::fmt;
 use std::io::{self, Read, Write};
 
-use csv::ReaderBuilder;
-
 use crate::block::Block;
 use crate::field::Layout;
+use crate::rows::{Row, Rows};
 use crate::summary::Summary;
 
 /// The header of the output.
 pub const HEADER: &str = "id,value,delta,gamma,vega,theta,rho,dividend_rho,vanna,volga,charm,barrier_delta,strike_delta,\
                           touch_probability,status";
-
-/// How much of a book is read at once, in bytes.
-const BUFFER: usize = 1 << 18;
 
 /// Why a book could not be repriced to its end.
 #[derive(Debug)]
@@ -22,7 +18,7 @@ pub enum Failure {
     /// The book has no header, or one that lacks a column.
     Header(String),
     /// The book could not be read on.
-    Read(csv::Error),
+    Read(io::Error),
     /// The values could not be written.
     Write(io::Error),
     /// The columns of a block do not fit each other: a fault of this program.
@@ -51,12 +47,12 @@ impl std::error::Error for Failure {}
 /// [`Failure`] if the book or its header cannot be read, or the output cannot be written.
 /// A bad row is not a failure: it gets NaN and a sentence.
 pub fn reprice(book: impl Read, mut out: impl Write, mut progress: impl FnMut(u64)) -> Result<Summary, Failure> {
-    let mut book = ReaderBuilder::new().flexible(true).buffer_capacity(BUFFER).from_reader(book);
-    let header = book.byte_headers().map_err(Failure::Read)?;
-    if header.is_empty() {
+    let mut book = Rows::new(book);
+    let mut header = Row::default();
+    if !book.next(&mut header).map_err(Failure::Read)? {
         return Err(Failure::Header("the book is empty: it has no header".to_owned()));
     }
-    let mut layout = Layout::from_header(header).map_err(Failure::Header)?;
+    let mut layout = Layout::from_header(&header).map_err(Failure::Header)?;
     let mut summary = Summary::of_book_with(std::mem::take(&mut layout.unread));
     let mut block = Block::new();
     let mut text = Vec::from(HEADER);

@@ -131,7 +131,7 @@ const BAD_ROWS: [(&str, &str); 22] = [
     ("x,,100,100,120,3,,0.5,0.2,0.01,0", "contract is missing"),
     ("x,up-and-out call,100,100", "barrier is missing: the row has fewer fields than the header"),
     ("x,call,100,100,,,,0.5,0.2,0.01,0,7", "the row must have as many fields as the header, got 12"),
-    ("x,call,\"1\n2\",100,,,,0.5,0.2,0.01,0", "spot must be a number, got 1\n2"),
+    ("x,call,\"100,100,,,,0.5,0.2,0.01,0", "a quote is opened and not closed in the same line"),
 ];
 
 #[test]
@@ -211,6 +211,17 @@ fn columns_may_stand_in_any_order_among_others() {
     let turned = reprice(turned);
     assert_eq!(text(&turned.stdout), text(&straight.stdout));
     assert!(text(&turned.stderr).contains("columns not read: desk"));
+}
+
+#[test]
+fn quotes_make_no_difference() {
+    let quoted: String = demo_book()
+        .lines()
+        .map(|row| row.split(',').map(|field| format!("\"{field}\"")).collect::<Vec<_>>().join(",") + "\n")
+        .collect();
+    assert_eq!(reprice(quoted).stdout, reprice(demo_book()).stdout);
+    let output = reprice(COLUMNS.to_owned() + "\"desk 1, \"\"upper\"\"\",call,100,100,,,,1,0.2,0,0\n");
+    assert!(values(&output)[0].starts_with("\"desk 1, \"\"upper\"\"\",7.96"), "{:?}", values(&output));
 }
 
 #[test]
