@@ -18,8 +18,6 @@ pub(crate) trait Lane:
     fn splat(value: f64) -> Self;
     /// `self * factor + summand`, rounded twice.
     fn mul_add(self, factor: Self, summand: Self) -> Self;
-    /// Magnitude.
-    fn abs(self) -> Self;
     /// Whether `self < other`; false where either is NaN.
     fn less(self, other: Self) -> Self::Mask;
     /// `yes` where the mask is true, `no` elsewhere.
@@ -62,10 +60,6 @@ impl Lane for f64 {
     #[inline(always)]
     fn mul_add(self, factor: f64, summand: f64) -> f64 {
         self * factor + summand
-    }
-    #[inline(always)]
-    fn abs(self) -> f64 {
-        f64::abs(self)
     }
     #[inline(always)]
     fn less(self, other: f64) -> bool {

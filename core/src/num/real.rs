@@ -39,11 +39,6 @@ pub(crate) trait Real:
     fn larger(self, other: Self) -> Self {
         if self < other { other } else { self }
     }
-
-    /// The smaller of two.
-    fn smaller(self, other: Self) -> Self {
-        if other < self { other } else { self }
-    }
 }
 
 impl Real for f64 {

@@ -23,31 +23,87 @@ const WIDEST_PANEL: f64 = 1.0;
 /// the spot's side of the barrier.
 pub(crate) fn value<R: Functions>(setting: &Setting<R>, strip: &Strip<R>, barrier: Option<f64>) -> R {
     let deviation = setting.deviation;
-    let (end, upwards, length) = match (&strip.lower, &strip.upper) {
+    let (end, upwards, far) = match (&strip.lower, &strip.upper) {
         (Some(lower), None) => (lower, true, None),
         (None, Some(upper)) => (upper, false, None),
-        (Some(lower), Some(upper)) => {
-            // Of the two ends, the strike is where a call or put vanishes.
-            let upwards = lower.level == Level::Strike;
-            let length = R::ln_ratio(upper.at, lower.at) / deviation;
-            (if upwards { lower } else { upper }, upwards, Some(length))
-        }
+        // Of two ends, the strike is where a call or put vanishes.
+        (Some(lower), Some(upper)) if lower.level == Level::Strike => (lower, true, Some(upper)),
+        (Some(lower), Some(upper)) => (upper, false, Some(lower)),
         // The whole line has no ends whose tails could cancel.
         (None, None) => return strip.closed(setting).value,
     };
+    let length = far.map(|far| R::ln_ratio(far.at, end.at).magnitude() / deviation);
     let payoff = Payoff::new(strip, end);
-    let decay = if upwards { -payoff.score } else { payoff.score };
+    let bell = Bell::new(&payoff, end, upwards, far.zip(length));
     let survival = barrier.map(|barrier| Survival::new(setting, end, barrier, length));
-    let (from, to) = window(decay, length);
-    let steepest = decay.magnitude().nearest() + survival.as_ref().map_or(0.0, |survival| survival.rate.nearest());
-    let finest = 4.0 / (1.0 + steepest + deviation.nearest());
+    let rate = survival.as_ref().map_or(0.0, |survival| survival.rate.nearest());
+    let finest = 4.0 / (1.0 + bell.slope.nearest() + rate + deviation.nearest());
     let mut sum = R::of(0.0);
-    integrate(from, to, finest, WIDEST_PANEL, |t, weight| {
-        let gaussian = (-(decay * t) - t.square().times(0.5)).exp();
-        let alive = survival.as_ref().map_or(R::of(1.0), |survival| survival.probability(t));
-        sum = sum + weight * gaussian * payoff.at(deviation * t) * alive;
+    integrate(bell.from, bell.to, finest, WIDEST_PANEL, |u, weight| {
+        let alive = survival.as_ref().map_or(R::of(1.0), |survival| survival.probability(&bell, u));
+        sum = sum + weight * bell.at(u) * payoff.at(deviation * (bell.origin + u.times(bell.step))) * alive;
     });
-    end.density * sum
+    bell.height * sum
+}
+
+/// The Gaussian of the integral, `height exp(-slope u - u^2 / 2)` at the distance `origin + step u` from the end of
+/// the strip, told from where it is highest: neither factor can overflow or lose digits to the other.
+struct Bell<R> {
+    height: R,
+    slope: R,
+    origin: R,
+    step: f64,
+    from: R,
+    to: R,
+}
+
+impl<R: Functions> Bell<R> {
+    fn new(payoff: &Payoff<R>, end: &End<R>, upwards: bool, far: Option<(&End<R>, R)>) -> Bell<R> {
+        let zero = R::of(0.0);
+        // Standard deviations from the peak to an end, outwards; the peak is within the strip where it is negative.
+        let decay = |end: &End<R>| {
+            let score = if payoff.by_share { end.d1 } else { end.d2 };
+            if upwards { -score } else { score }
+        };
+        let per_share = |at: f64| if payoff.by_share { R::of(at) / R::of(end.at) } else { R::of(1.0) };
+        let within = |reach: f64, length: Option<R>| match length {
+            Some(length) if length.nearest() <= reach => length,
+            _ => R::of(reach),
+        };
+        let length = far.map(|(_, length)| length);
+        let slope = decay(end);
+        if slope >= zero {
+            let to = within(reach::<R>(slope.nearest()), length);
+            return Bell { height: end.density, slope, origin: zero, step: 1.0, from: zero, to };
+        }
+        if let Some((far, length)) = far {
+            let slope = -decay(far);
+            if slope >= zero {
+                let to = within(reach::<R>(slope.nearest()), Some(length));
+                let height = far.density * per_share(far.at);
+                return Bell { height, slope, origin: length, step: -1.0, from: zero, to };
+            }
+        }
+        let half = reach::<R>(0.0);
+        let weight = if payoff.by_share { end.share_weight / R::of(end.at) } else { end.cash_weight };
+        Bell {
+            height: R::inv_root_two_pi() * weight,
+            slope: zero,
+            origin: -slope,
+            step: 1.0,
+            from: slope.larger(R::of(-half)),
+            to: within(half, length.map(|length| length + slope)),
+        }
+    }
+
+    fn at(&self, u: R) -> R {
+        (-(self.slope * u) - u.square().times(0.5)).exp()
+    }
+}
+
+/// How far `exp(-slope u - u^2 / 2)` reaches before it has lost all that matters.
+fn reach<R: Functions>(slope: f64) -> f64 {
+    2.0 * R::NEGLIGIBLE / (slope + libm::sqrt(slope * slope + 2.0 * R::NEGLIGIBLE))
 }
 
 /// What the strip pays at a distance from its end, in the measure that suits it.
@@ -56,10 +112,10 @@ struct Payoff<R> {
     at_end: R,
     /// By how much it grows from there to far away; 0 for a digital.
     growth: R,
-    /// Whether it is counted per share, so that what it is worth at the end decays as the spot grows.
-    per_share: bool,
-    /// `d1` or `d2`, as the measure has it.
-    score: R,
+    /// Whether the measure is the share's, and the payoff counted in shares.
+    by_share: bool,
+    /// Whether what it is worth at the end decays, counted so, as the spot grows.
+    fades: bool,
 }
 
 impl<R: Functions> Payoff<R> {
@@ -68,13 +124,13 @@ impl<R: Functions> Payoff<R> {
         let zero = R::of(0.0);
         let cash = R::of(strip.line.cash);
         if strip.line.shares == 0.0 {
-            Payoff { at_end: -cash, growth: zero, per_share: false, score: end.d2 }
+            Payoff { at_end: -cash, growth: zero, by_share: false, fades: false }
         } else if strip.line.cash == 0.0 {
-            Payoff { at_end: at, growth: zero, per_share: false, score: end.d1 }
+            Payoff { at_end: at, growth: zero, by_share: true, fades: false }
         } else if strip.line.shares > 0.0 {
-            Payoff { at_end: at - cash, growth: at, per_share: true, score: end.d1 }
+            Payoff { at_end: at - cash, growth: at, by_share: true, fades: true }
         } else {
-            Payoff { at_end: -at - cash, growth: at, per_share: false, score: end.d2 }
+            Payoff { at_end: -at - cash, growth: at, by_share: false, fades: false }
         }
     }
 
@@ -84,7 +140,7 @@ impl<R: Functions> Payoff<R> {
             return self.at_end;
         }
         let fallen = (-u).expm1();
-        let at_end = if self.per_share { self.at_end * (R::of(1.0) + fallen) } else { self.at_end };
+        let at_end = if self.fades { self.at_end * (R::of(1.0) + fallen) } else { self.at_end };
         at_end - self.growth * fallen
     }
 }
@@ -110,30 +166,8 @@ impl<R: Functions> Survival<R> {
         }
     }
 
-    fn probability(&self, t: R) -> R {
-        -(-self.rate * (self.from_end + t.times(self.outwards))).expm1()
-    }
-}
-
-/// Where an integrand that falls off as `exp(-decay t - t^2 / 2)` matters, within `0 < t < length`.
-fn window<R: Functions>(decay: R, length: Option<R>) -> (R, R) {
-    let slope = decay.nearest();
-    let to = match length {
-        Some(length) if length.nearest() <= reach::<R>(slope) => length,
-        _ => R::of(reach::<R>(slope)),
-    };
-    let end = to.nearest();
-    // With the peak beyond the strip the integrand falls off inwards from there.
-    let from = if -slope > end { end - reach::<R>(-slope - end) } else { -slope - reach::<R>(0.0) };
-    (R::of(from.max(0.0)), to)
-}
-
-/// How far `exp(-slope t - t^2 / 2)` reaches before it has lost all that matters from its maximum over `t > 0`.
-fn reach<R: Functions>(slope: f64) -> f64 {
-    let root = libm::sqrt(2.0 * R::NEGLIGIBLE);
-    if slope > 0.0 {
-        2.0 * R::NEGLIGIBLE / (slope + libm::sqrt(slope * slope + 2.0 * R::NEGLIGIBLE))
-    } else {
-        root - slope
+    fn probability(&self, bell: &Bell<R>, u: R) -> R {
+        let origin = self.from_end + bell.origin.times(self.outwards);
+        -(-self.rate * (origin + u.times(self.outwards * bell.step))).expm1()
     }
 }

@@ -38,6 +38,9 @@ pub(crate) struct End<R> {
     share: Edge<R>,
     /// `e^(-rT) phi(d2)`; the share's is `at` times this.
     pub(crate) density: R,
+    /// Worth of cash and of a share wherever the spot ends.
+    pub(crate) cash_weight: R,
+    pub(crate) share_weight: R,
     pub(crate) d1: R,
     pub(crate) d2: R,
 }
@@ -73,8 +76,17 @@ impl<R: Functions> End<R> {
 
     fn new(setting: &Setting<R>, level: Level, at: f64, d2: R, density: R, [bond, share]: [R; 2]) -> End<R> {
         let d1 = d2 + setting.deviation;
-        let (cash, share) = (Edge::new(d2, density, bond), Edge::new(d1, density.times(at), share));
-        End { level, at, cash, share, density, d1, d2 }
+        End {
+            level,
+            at,
+            cash: Edge::new(d2, density, bond),
+            share: Edge::new(d1, density.times(at), share),
+            density,
+            cash_weight: bond,
+            share_weight: share,
+            d1,
+            d2,
+        }
     }
 
     /// Without volatility all mass is at the forward.
@@ -88,7 +100,18 @@ impl<R: Functions> End<R> {
             tie
         };
         let edge = |total: R| Edge { above: total.times(above), below: total.times(1.0 - above) };
-        End { level, at, cash: edge(setting.bond), share: edge(setting.share), density: zero, d1: zero, d2: zero }
+        let (cash_weight, share_weight) = (setting.bond, setting.share);
+        End {
+            level,
+            at,
+            cash: edge(cash_weight),
+            share: edge(share_weight),
+            density: zero,
+            cash_weight,
+            share_weight,
+            d1: zero,
+            d2: zero,
+        }
     }
 }
 
