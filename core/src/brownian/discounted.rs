@@ -47,8 +47,6 @@ pub(crate) enum Form<R> {
     Closed {
         /// `w`
         root: R,
-        /// `(nu - w) / v^2` and `(nu + w) / v^2`
-        exponents: [R; 2],
         /// The two terms.
         terms: [R; 2],
     },
@@ -77,19 +75,16 @@ impl<R: Functions> DiscountedPassage<R> {
             return DiscountedPassage { value, density, form: Form::Integral { moments: [first, second] } };
         }
         let root = root_squared.sqrt();
-        let exponents = if drift > zero {
-            [discount_rate.times(-2.0) / (drift + root), (drift + root) / variance]
-        } else {
-            [(drift - root) / variance, discount_rate.times(2.0) / (root - drift)]
-        };
+        let exponent =
+            if drift > zero { discount_rate.times(-2.0) / (drift + root) } else { (drift - root) / variance };
         let reach = (root * horizon - distance) / deviation;
         let near = if reach > zero {
-            (exponents[0] * distance).exp() - density * reach.mills()
+            (exponent * distance).exp() - density * reach.mills()
         } else {
             density * (-reach).mills()
         };
         let far = density * ((root * horizon + distance) / deviation).mills();
-        DiscountedPassage { value: near + far, density, form: Form::Closed { root, exponents, terms: [near, far] } }
+        DiscountedPassage { value: near + far, density, form: Form::Closed { root, terms: [near, far] } }
     }
 }
 

@@ -119,13 +119,13 @@ impl Levels {
         self.cut(payoff, side).map(|ends| self.plain(setting, payoff, ends))
     }
 
-    /// The worth of a payoff if the barrier is never touched.
-    fn untouched<R: Functions>(&self, setting: &Setting<R>, payoff: Payoff) -> R {
-        let Some(live) = self.plain_side(setting, payoff, self.live()) else { return R::of(0.0) };
-        let Some(image) = self.image(setting, payoff) else { return live.value(setting) };
+    /// The worth of a payoff if the barrier is never touched, and whether the closed form cancels.
+    fn untouched<R: Functions>(&self, setting: &Setting<R>, payoff: Payoff) -> (R, bool) {
+        let Some(live) = self.plain_side(setting, payoff, self.live()) else { return (R::of(0.0), false) };
+        let Some(image) = self.image(setting, payoff) else { return (live.value(setting), false) };
         let (plain, mirrored) = (live.closed(setting), image.closed(setting));
         let sum = Sum { value: plain.value - mirrored.value, terms: plain.terms + mirrored.terms };
-        if sum.cancelled() { positive::value(setting, &live, Some(self.barrier)) } else { sum.value }
+        if sum.cancelled() { (positive::value(setting, &live, Some(self.barrier)), true) } else { (sum.value, false) }
     }
 }
 
@@ -139,16 +139,22 @@ pub(crate) enum Event {
 
 /// Value of a payoff under an event.
 pub(crate) fn value<R: Functions>(setting: &Setting<R>, levels: &Levels, payoff: Payoff, event: Event) -> R {
+    assess(setting, levels, payoff, event).0
+}
+
+/// Value of a payoff under an event, and whether the closed form cancelled over several strips.
+fn assess<R: Functions>(setting: &Setting<R>, levels: &Levels, payoff: Payoff, event: Event) -> (R, bool) {
     let worth = |strip: Option<Strip<R>>| strip.map_or(R::of(0.0), |strip| strip.value(setting));
-    let value = match event {
-        Event::Always => levels.plain(setting, payoff, everywhere(payoff)).value(setting),
+    let (value, cancelled) = match event {
+        Event::Always => (levels.plain(setting, payoff, everywhere(payoff)).value(setting), false),
         Event::Touched => {
-            worth(levels.plain_side(setting, payoff, levels.beyond())) + worth(levels.image(setting, payoff))
+            let beyond = worth(levels.plain_side(setting, payoff, levels.beyond()));
+            (beyond + worth(levels.image(setting, payoff)), false)
         }
         Event::Untouched => levels.untouched(setting, payoff),
     };
     // Without volatility a strike at the forward leaves the rounding of a difference.
-    value.larger(R::of(0.0))
+    (value.larger(R::of(0.0)), cancelled)
 }
 
 /// Value and derivatives of a payoff under an event.
@@ -171,5 +177,6 @@ pub(crate) fn sensitivity<R: Functions>(
         Event::Touched => plain(levels.beyond()) + image(),
         Event::Untouched => plain(levels.live()) - image(),
     };
-    Sensitivity { value: value(setting, levels, payoff, event), ..sum }
+    let (value, cancelled) = assess(setting, levels, payoff, event);
+    Sensitivity { value, delicate: sum.delicate || cancelled, ..sum }
 }

@@ -72,9 +72,7 @@ pub(crate) fn sensitivity<R: Functions>(setting: &Setting<R>, levels: &Levels) -
     let (passage, path) = passage(setting, levels);
     let Path { distance, drift, sign, score, .. } = path;
     let gradient = match passage.form {
-        Form::Closed { root, exponents, terms } => {
-            path.leg(&passage, root, exponents[0], terms[0]) + path.leg(&passage, -root, exponents[1], terms[1])
-        }
+        Form::Closed { root, terms } => path.leg(&passage, root, terms[0]) + path.leg(&passage, -root, terms[1]),
         Form::Integral { moments } => path.integral(&passage, moments),
     };
     // The discounted density of the passage at expiry.
@@ -92,7 +90,7 @@ pub(crate) fn sensitivity<R: Functions>(setting: &Setting<R>, levels: &Levels) -
         rate: gradient.rate,
         dividend: gradient.dividend,
         log_barrier: gradient.h.times(sign),
-        strike: R::of(0.0),
+        ..Sensitivity::none()
     }
 }
 
@@ -129,24 +127,38 @@ impl<R: Functions> Path<R> {
         [n, first, (n_vv - n_v.times(4.0) / self.vol) / self.variance + n.times(6.0) / self.variance]
     }
 
+    /// `(drift - root) / vol^2` with its first two derivatives in volatility, by its equal
+    /// `-2 rate / (drift + root)` where drift and root have the same sign and would cancel.
+    fn exponent(&self, root: R, [root_v, root_vv]: [R; 2]) -> [R; 3] {
+        let Path { drift, rate, .. } = *self;
+        let [drift_v, drift_vv] = self.drift_v();
+        if (drift > R::of(0.0)) == (root > R::of(0.0)) {
+            let (sum, sum_v, sum_vv) = (drift + root, drift_v + root_v, drift_vv + root_vv);
+            let value = rate.times(-2.0) / sum;
+            let first = -value * sum_v / sum;
+            [value, first, -(first.times(2.0) * sum_v + value * sum_vv) / sum]
+        } else {
+            self.over_variance([drift - root, drift_v - root_v, drift_vv - root_vv])
+        }
+    }
+
     /// Derivatives of `exp((drift - root) distance / vol^2) N((root expiry - distance) / deviation)`; with the
     /// sign of `root` changed it is the other term.
-    fn leg(&self, passage: &DiscountedPassage<R>, root: R, exponent_h: R, term: R) -> Chain<R> {
+    fn leg(&self, passage: &DiscountedPassage<R>, root: R, term: R) -> Chain<R> {
         let Path { distance, drift, sign, vol, variance, rate, expiry, root_expiry, deviation, score } = *self;
         let (zero, one) = (R::of(0.0), R::of(1.0));
         let [drift_v, drift_vv] = self.drift_v();
         let root_v = (drift * drift_v + (rate * vol).times(2.0)) / root;
         let root_vv = (drift_v.square() + drift * drift_vv + rate.times(2.0) - root_v.square()) / root;
-        let [_, exponent_hv, exponent_hvv] = self.over_variance([drift - root, drift_v - root_v, drift_vv - root_vv]);
-        let per_variance = distance.times(sign) / variance;
+        let [slope, slope_v, slope_vv] = self.exponent(root, [root_v, root_vv]);
         let exponent = Chain {
-            h: exponent_h,
-            v: distance * exponent_hv,
-            rate: per_variance * (one - (drift + variance.times(sign)) / root),
-            dividend: per_variance * (drift / root - one),
+            h: slope,
+            v: distance * slope_v,
+            rate: -distance * (one + slope.times(sign)) / root,
+            dividend: distance * slope.times(sign) / root,
             hh: zero,
-            hv: exponent_hv,
-            vv: distance * exponent_hvv,
+            hv: slope_v,
+            vv: distance * slope_vv,
         };
         let reach = root * expiry / deviation;
         let reach_v = root_v * root_expiry / vol - reach / vol;
@@ -233,12 +245,16 @@ impl<R: Functions> Path<R> {
             (a1 * a2 + a12) * passage.value - (a1 * c2 + a2 * c1 + c12) * first + c1 * c2 * second_moment
                 - edge * (a1 * y2 + a2 * y1 + y12 + y1 * y2 * (bend / y - y) - (c1 * y2 + c2 * y1) / y.square())
         };
+        let h = derivative(a.h, c.h, start.h);
+        // From the backward equation: the chain rule's own terms grow as 1 / y and cancel near the barrier.
+        let time = passage.density * distance / (deviation * expiry);
+        let hh = (time + drift * h + rate * passage.value).times(2.0) / variance;
         Chain {
-            h: derivative(a.h, c.h, start.h),
+            h,
             v: derivative(a.v, c.v, start.v),
             rate: derivative(a.rate, c.rate, zero),
             dividend: derivative(a.dividend, c.dividend, zero),
-            hh: second(Pair::Hh),
+            hh,
             hv: second(Pair::Hv),
             vv: second(Pair::Vv),
         }

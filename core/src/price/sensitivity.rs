@@ -21,6 +21,8 @@ pub(crate) struct Sensitivity<R> {
     pub(crate) vol: R,
     /// d²V/dvol²
     pub(crate) vol_vol: R,
+    /// The magnitude of the terms that `vol_vol` is the sum of.
+    pub(crate) vol_vol_terms: R,
     /// d²V/dx dvol
     pub(crate) slope_vol: R,
     /// dV/dT
@@ -35,6 +37,8 @@ pub(crate) struct Sensitivity<R> {
     pub(crate) log_barrier: R,
     /// dV/dstrike
     pub(crate) strike: R,
+    /// Whether the terms of the value cancelled, and with them those of the derivatives.
+    pub(crate) delicate: bool,
 }
 
 impl<R: Functions> Sensitivity<R> {
@@ -47,6 +51,7 @@ impl<R: Functions> Sensitivity<R> {
             bend: zero,
             vol: zero,
             vol_vol: zero,
+            vol_vol_terms: zero,
             slope_vol: zero,
             time: zero,
             slope_time: zero,
@@ -54,6 +59,7 @@ impl<R: Functions> Sensitivity<R> {
             dividend: zero,
             log_barrier: zero,
             strike: zero,
+            delicate: false,
         }
     }
 
@@ -71,12 +77,14 @@ impl<R: Functions> Sensitivity<R> {
         let power_vol = carry.times(4.0) / (variance * vol);
         let tilt = power_vol * y;
         let tilted = tilt * self.value + self.vol;
+        let vol_vol = [(tilt - R::of(3.0) / vol) * tilt * self.value, tilt.times(2.0) * self.vol, self.vol_vol];
         Sensitivity {
             value: self.value,
             slope: power * self.value - self.slope,
             bend: power * (power - one) * self.value + (one - power).times(2.0) * self.slope + self.bend,
             vol: tilted,
-            vol_vol: (tilt - R::of(3.0) / vol) * tilt * self.value + tilt.times(2.0) * self.vol + self.vol_vol,
+            vol_vol: vol_vol[0] + vol_vol[1] + vol_vol[2],
+            vol_vol_terms: vol_vol[0].magnitude() + vol_vol[1].magnitude() + self.vol_vol_terms,
             slope_vol: power_vol * self.value + power * tilted - tilt * self.slope - self.slope_vol,
             time: self.time,
             slope_time: power * self.time - self.slope_time,
@@ -84,6 +92,7 @@ impl<R: Functions> Sensitivity<R> {
             dividend: self.dividend - tilt_rate * self.value,
             log_barrier: self.slope.times(2.0) - power * self.value + self.log_barrier,
             strike: self.strike,
+            delicate: self.delicate,
         }
     }
 
@@ -95,6 +104,7 @@ impl<R: Functions> Sensitivity<R> {
             bend: with(self.bend, other.bend),
             vol: with(self.vol, other.vol),
             vol_vol: with(self.vol_vol, other.vol_vol),
+            vol_vol_terms: self.vol_vol_terms + other.vol_vol_terms,
             slope_vol: with(self.slope_vol, other.slope_vol),
             time: with(self.time, other.time),
             slope_time: with(self.slope_time, other.slope_time),
@@ -102,12 +112,22 @@ impl<R: Functions> Sensitivity<R> {
             dividend: with(self.dividend, other.dividend),
             log_barrier: with(self.log_barrier, other.log_barrier),
             strike: with(self.strike, other.strike),
+            delicate: self.delicate || other.delicate,
         }
     }
 
-    /// With every number multiplied.
-    pub(crate) fn times(self, factor: f64) -> Sensitivity<R> {
-        self.combined(self, |number, _| number.times(factor))
+    /// With every number multiplied by an amount, which is not negative.
+    pub(crate) fn times(self, amount: f64) -> Sensitivity<R> {
+        let scaled = self.combined(self, |number, _| number.times(amount));
+        Sensitivity { vol_vol_terms: self.vol_vol_terms.times(amount), ..scaled }
+    }
+
+    /// Whether the derivatives have lost digits: with the value's, or (the one that does so alone, where the
+    /// forward nears the barrier under a small volatility) volga's.
+    pub(crate) fn cancelled(&self) -> bool {
+        /// Volga passes through 0 on its way; only a deep loss shows that its terms cancel for another reason.
+        const DEEP: f64 = 1.0 / 256.0;
+        self.delicate || self.vol_vol.magnitude() < self.vol_vol_terms.times(DEEP)
     }
 
     /// In the trade's units.

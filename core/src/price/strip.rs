@@ -175,9 +175,11 @@ impl<R: Functions> Strip<R> {
     /// The derivatives, with the value by the closed form.
     pub(crate) fn sensitivity(&self, setting: &Setting<R>) -> Sensitivity<R> {
         let Setting { vol, rate, dividend, expiry, carry, variance, root_expiry, deviation, .. } = *setting;
-        let [share, cash] = self.legs(setting).map(|leg| leg.value);
+        let [share, cash] = self.legs(setting);
+        let delicate = Sum { value: share.value - cash.value, terms: share.terms + cash.terms }.cancelled();
+        let (share, cash) = (share.value, cash.value);
         let zero = R::of(0.0);
-        let mut sum = Sensitivity { value: share - cash, ..Sensitivity::none() };
+        let mut sum = Sensitivity { value: share - cash, delicate, ..Sensitivity::none() };
         let mut jumps = zero;
         for (end, sign) in [(&self.lower, 1.0), (&self.upper, -1.0)] {
             let Some(end) = end else { continue };
@@ -193,8 +195,9 @@ impl<R: Functions> Strip<R> {
             jumps = jumps + per_deviation * jump;
             sum.bend = sum.bend + per_deviation * curve;
             sum.slope_vol = sum.slope_vol - per_vol * (end.d2 / deviation * curve + jump / deviation.square());
-            sum.vol_vol =
-                sum.vol_vol + per_vol * (end.d1 * end.d2 * curve + jump * (end.d1 + end.d2) / deviation) / vol;
+            let vol_vol = per_vol * (end.d1 * end.d2 * curve + jump * (end.d1 + end.d2) / deviation) / vol;
+            sum.vol_vol = sum.vol_vol + vol_vol;
+            sum.vol_vol_terms = sum.vol_vol_terms + vol_vol.magnitude();
             match end.level {
                 Level::Strike => sum.strike = sum.strike - per_deviation * jump / R::of(end.at),
                 Level::Barrier => sum.log_barrier = sum.log_barrier - per_deviation * jump,

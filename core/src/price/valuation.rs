@@ -1,10 +1,10 @@
 //! The value of a contract, and its Greeks.
 
 use crate::error::{Error, Result, Status};
-use crate::price::Greeks;
 use crate::price::event::Levels;
 use crate::price::legs::Leg;
 use crate::price::setting::Setting;
+use crate::price::{Greeks, reference_greeks};
 use crate::special::Functions;
 use crate::terms::{Direction, Market, TermSheet};
 
@@ -68,7 +68,13 @@ pub fn price(sheet: &TermSheet, market: &Market) -> Result<f64> {
 pub fn greeks(sheet: &TermSheet, market: &Market) -> Result<Greeks> {
     let (legs, setting, levels) = parts::<f64>(sheet, market)?;
     let sum = legs[0].sensitivity(&setting, &levels) + legs[1].sensitivity(&setting, &levels);
-    representable(sum.value, sum.greeks(market.spot, sheet.barrier))
+    let greeks = sum.greeks(market.spot, sheet.barrier);
+    if sum.cancelled() {
+        // The terms of the derivatives cancel where those of the value do; there are digits enough to lose in
+        // double-double.
+        return reference_greeks(sheet, market).map(|exact| Greeks { value: greeks.value, ..exact });
+    }
+    representable(sum.value, greeks)
 }
 
 pub(crate) fn parts<R: Functions>(sheet: &TermSheet, market: &Market) -> Result<([Leg; 2], Setting<R>, Levels)> {
