@@ -15,8 +15,3 @@ mod summary;
 
 pub use reprice::{Failure, HEADER, reprice};
 pub use summary::Summary;
-
-/// The Rust in the README, compiled and run as a documentation test.
-#[cfg(doctest)]
-#[doc = include_str!("../../README.md")]
-pub struct Readme;
