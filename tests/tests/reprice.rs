@@ -139,11 +139,9 @@ fn a_bad_row_gets_a_sentence_and_its_neighbours_are_unharmed() {
     let good: Vec<String> = demo_book().lines().skip(1).map(str::to_owned).collect();
     let clean = reprice(COLUMNS.to_owned() + &good.join("\n"));
     let clean = values(&clean);
-    let mut book = COLUMNS.to_owned();
-    for (row, bad) in good.iter().zip(BAD_ROWS.iter().cycle()) {
-        book += &format!("{row}\n{}\n", bad.0);
-    }
-    let output = reprice(&book);
+    let mixed: Vec<&str> =
+        good.iter().zip(BAD_ROWS.iter().cycle()).flat_map(|(row, (bad, _))| [row.as_str(), bad]).collect();
+    let output = reprice(COLUMNS.to_owned() + &mixed.join("\n"));
     assert_eq!(output.status.code(), Some(1));
     let mut reader = csv::ReaderBuilder::new().from_reader(&output.stdout[..]);
     let rows: Vec<csv::StringRecord> = reader.records().map(Result::unwrap).collect();
@@ -242,7 +240,7 @@ fn a_file_goes_to_a_file_and_the_summary_to_the_terminal() {
 #[test]
 fn who_reads_the_values_may_stop_early() {
     let book = file("for-a-glance.csv");
-    let rows: String = demo_book().lines().skip(1).map(|row| format!("{row}\n")).collect();
+    let rows = demo_book().split_off(COLUMNS.len());
     fs::write(&book, COLUMNS.to_owned() + &rows.repeat(20)).unwrap();
     let mut child = Command::new(&*PROGRAM).arg(&book).stdout(Stdio::piped()).stderr(Stdio::piped()).spawn().unwrap();
     let mut first = [0; 2];
