@@ -17,7 +17,8 @@ How rows are drawn (SEED fixes them; rows worth less than 1e-290, and strikes eq
     broad      spot 1 … 10,000, vol 1 … 200 %, an hour … 30 years, rate and dividend -20 … 20 %, barrier
                0.1 … 350 % away in log terms, strike around the spot by the deviation; all digits used
     extreme    a broad row with one or two of its numbers replaced, see EXTREMES
-    greeks     everyday and broad rows alternating
+    greeks     everyday and broad rows alternating; greeks_extreme: extreme rows, after those
+               of hard_rows.csv, on which Greeks of ours once failed
     one_touch  one-touches paid at hit with rate -3 %, vol 5 %, drift where the first-passage root is imaginary, or near
                the double root down to neighbouring doubles
     passage    E[exp(-discount_rate tau); tau <= horizon] of Brownian motion, likewise, and ordinary cases
@@ -298,7 +299,9 @@ def passages(count):
     while len(rows) < count:
         horizon = log_uniform(rng, 0.02, 10)
         if len(rows) % 3:
-            vol, rate = (0.05, -0.03) if len(rows) % 3 == 1 else (log_uniform(rng, 0.02, 1), -log_uniform(rng, 1e-3, 0.2))
+            vol, rate = 0.05, -0.03
+            if len(rows) % 3 == 2:
+                vol, rate = log_uniform(rng, 0.02, 1), -log_uniform(rng, 1e-3, 0.2)
             drift = imaginary_or_double_root(rng, vol, rate)
         else:
             vol, rate = log_uniform(rng, 0.02, 1), rng.uniform(-0.1, 0.2)
@@ -313,11 +316,17 @@ def mixed(count):
     return [row for pair in zip(everydays, broads, strict=True) for row in pair]
 
 
+def hard():
+    with (HERE / "hard_rows.csv").open(newline="") as file:
+        return [Row.of(record) for record in csv.DictReader(file)]
+
+
 TABLES = {
     "price_everyday": (PRICE_COLUMNS, price_cells, lambda: drawn("everyday", everyday, 616)),
     "price_broad": (PRICE_COLUMNS, price_cells, lambda: drawn("broad", broad, 792)),
     "price_extreme": (PRICE_COLUMNS, price_cells, lambda: drawn("extreme", extreme, 308)),
     "greeks": (GREEK_COLUMNS, greek_cells, lambda: mixed(308)),
+    "greeks_extreme": (GREEK_COLUMNS, greek_cells, lambda: [*hard(), *drawn("greeks extreme", extreme, 132)]),
     "one_touch": (PRICE_COLUMNS, price_cells, lambda: one_touches(60)),
     "passage": (PASSAGE_COLUMNS, passage_cells, lambda: passages(150)),
 }

@@ -7,7 +7,7 @@ use common::{Distribution, contract_row, number, table};
 use floodmark::price::{greeks, price};
 
 /// How many `eps (1 + kappa) |V|` a price may be off.
-const BUDGET: f64 = 1000.0;
+const BUDGET: f64 = 16.0;
 
 fn within_budget(name: &str) {
     let mut errors = Distribution::default();
