@@ -84,8 +84,7 @@ fn a_function_counts_as_reached_under_its_whole_name_only() {
 /// Whether a text has this path, not as a part of a longer one.
 fn mentions(text: &str, path: &str) -> bool {
     let word = |c: char| c.is_alphanumeric() || c == '_' || c == ':';
-    text.match_indices(path)
-        .any(|(at, _)| !text[..at].ends_with(word) && !text[at + path.len()..].starts_with(|c| word(c)))
+    text.match_indices(path).any(|(at, _)| !text[..at].ends_with(word) && !text[at + path.len()..].starts_with(word))
 }
 
 /// The public functions below a folder as `Type::method`, or `module::function` with the folder as the module.
