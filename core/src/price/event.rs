@@ -119,13 +119,14 @@ impl Levels {
         self.cut(payoff, side).map(|ends| self.plain(setting, payoff, ends))
     }
 
-    /// The worth of a payoff if the barrier is never touched, and whether the closed form cancels.
-    fn untouched<R: Functions>(&self, setting: &Setting<R>, payoff: Payoff) -> (R, bool) {
-        let Some(live) = self.plain_side(setting, payoff, self.live()) else { return (R::of(0.0), false) };
-        let Some(image) = self.image(setting, payoff) else { return (live.value(setting), false) };
-        let (plain, mirrored) = (live.closed(setting), image.closed(setting));
-        let sum = Sum { value: plain.value - mirrored.value, terms: plain.terms + mirrored.terms };
-        if sum.cancelled() { (positive::value(setting, &live, Some(self.barrier)), true) } else { (sum.value, false) }
+    /// The strips that a payoff under an event is made of.
+    pub(crate) fn claim<R: Functions>(&self, setting: &Setting<R>, payoff: Payoff, event: Event) -> Claim<R> {
+        let (plain, image) = match event {
+            Event::Always => (Some(self.plain(setting, payoff, everywhere(payoff))), None),
+            Event::Touched => (self.plain_side(setting, payoff, self.beyond()), self.image(setting, payoff)),
+            Event::Untouched => (self.plain_side(setting, payoff, self.live()), self.image(setting, payoff)),
+        };
+        Claim { barrier: self.barrier, event, plain, image }
     }
 }
 
@@ -137,46 +138,46 @@ pub(crate) enum Event {
     Untouched,
 }
 
-/// Value of a payoff under an event.
-pub(crate) fn value<R: Functions>(setting: &Setting<R>, levels: &Levels, payoff: Payoff, event: Event) -> R {
-    assess(setting, levels, payoff, event).0
-}
-
-/// Value of a payoff under an event, and whether the closed form cancelled over several strips.
-fn assess<R: Functions>(setting: &Setting<R>, levels: &Levels, payoff: Payoff, event: Event) -> (R, bool) {
-    let worth = |strip: Option<Strip<R>>| strip.map_or(R::of(0.0), |strip| strip.value(setting));
-    let (value, cancelled) = match event {
-        Event::Always => (levels.plain(setting, payoff, everywhere(payoff)).value(setting), false),
-        Event::Touched => {
-            let beyond = worth(levels.plain_side(setting, payoff, levels.beyond()));
-            (beyond + worth(levels.image(setting, payoff)), false)
-        }
-        Event::Untouched => levels.untouched(setting, payoff),
-    };
-    // Without volatility a strike at the forward leaves the rounding of a difference.
-    (value.larger(R::of(0.0)), cancelled)
-}
-
-/// Value and derivatives of a payoff under an event.
-pub(crate) fn sensitivity<R: Functions>(
-    setting: &Setting<R>,
-    levels: &Levels,
-    payoff: Payoff,
+/// A payoff under an event, as strips: a plain one and the image of one, added or subtracted as the event has it.
+#[derive(Clone, Copy, Debug)]
+pub(crate) struct Claim<R> {
+    barrier: f64,
     event: Event,
-) -> Sensitivity<R> {
-    let plain = |side| {
-        let strip = levels.plain_side(setting, payoff, side);
-        strip.map_or_else(Sensitivity::none, |strip| strip.sensitivity(setting))
-    };
-    let image = || {
-        let strip = levels.image(setting, payoff);
-        strip.map_or_else(Sensitivity::none, |strip| strip.sensitivity(setting).reflected(setting, levels.barrier))
-    };
-    let sum = match event {
-        Event::Always => levels.plain(setting, payoff, everywhere(payoff)).sensitivity(setting),
-        Event::Touched => plain(levels.beyond()) + image(),
-        Event::Untouched => plain(levels.live()) - image(),
-    };
-    let (value, cancelled) = assess(setting, levels, payoff, event);
-    Sensitivity { value, delicate: sum.delicate || cancelled, ..sum }
+    pub(crate) plain: Option<Strip<R>>,
+    pub(crate) image: Option<Strip<R>>,
+}
+
+/// A value, and whether it is the integral of a positive integrand, since the difference of plain and image
+/// cancels.
+#[derive(Clone, Copy, Debug)]
+pub(crate) struct Worth<R> {
+    pub(crate) value: R,
+    pub(crate) integrated: bool,
+}
+
+impl<R: Functions> Claim<R> {
+    pub(crate) fn worth(&self, setting: &Setting<R>) -> Worth<R> {
+        let zero = R::of(0.0);
+        if let (Event::Untouched, Some(live), Some(image)) = (self.event, &self.plain, &self.image) {
+            let (plain, mirrored) = (live.closed(setting), image.closed(setting));
+            let sum = Sum { value: plain.value - mirrored.value, terms: plain.terms + mirrored.terms };
+            if sum.cancelled() {
+                return Worth { value: positive::value(setting, live, Some(self.barrier)), integrated: true };
+            }
+            return Worth { value: sum.value, integrated: false };
+        }
+        let strip = |strip: &Option<Strip<R>>| strip.as_ref().map_or(zero, |strip| strip.value(setting));
+        // Without volatility a strike at the forward leaves the rounding of a difference.
+        Worth { value: (strip(&self.plain) + strip(&self.image)).larger(zero), integrated: false }
+    }
+
+    pub(crate) fn sensitivity(&self, setting: &Setting<R>) -> Sensitivity<R> {
+        let of = |strip: &Strip<R>| strip.sensitivity(setting);
+        let plain = self.plain.as_ref().map_or_else(Sensitivity::none, of);
+        let image =
+            self.image.as_ref().map_or_else(Sensitivity::none, |image| of(image).reflected(setting, self.barrier));
+        let sum = if self.event == Event::Untouched { plain - image } else { plain + image };
+        let worth = self.worth(setting);
+        Sensitivity { value: worth.value, delicate: sum.delicate || worth.integrated, ..sum }
+    }
 }

@@ -96,11 +96,11 @@ pub(crate) fn sensitivity<R: Functions>(setting: &Setting<R>, levels: &Levels) -
 
 /// The way to the barrier.
 #[derive(Clone, Copy, Debug)]
-struct Path<R> {
+pub(crate) struct Path<R> {
     /// `|ln(barrier / spot)|`
-    distance: R,
+    pub(crate) distance: R,
     /// Drift of the logarithm towards the barrier.
-    drift: R,
+    pub(crate) drift: R,
     /// 1 for a barrier above, -1 below.
     sign: f64,
     vol: R,
@@ -111,7 +111,7 @@ struct Path<R> {
     /// `vol sqrt(expiry)`
     deviation: R,
     /// `-distance / deviation`
-    score: R,
+    pub(crate) score: R,
 }
 
 impl<R: Functions> Path<R> {
@@ -262,7 +262,7 @@ impl<R: Functions> Path<R> {
 }
 
 /// The passage, and the way to it.
-fn passage<R: Functions>(setting: &Setting<R>, levels: &Levels) -> (DiscountedPassage<R>, Path<R>) {
+pub(crate) fn passage<R: Functions>(setting: &Setting<R>, levels: &Levels) -> (DiscountedPassage<R>, Path<R>) {
     let Setting { spot, vol, variance, rate, expiry, carry, root_expiry, deviation, .. } = *setting;
     let (distance, sign) = match levels.direction {
         Direction::Up => (R::ln_ratio(levels.barrier, spot), 1.0),

@@ -1,6 +1,6 @@
 //! Which payoff, under which event, a contract is made of: the table that turns a term sheet into formulas.
 
-use crate::price::event::{self, Event, Levels};
+use crate::price::event::{Event, Levels};
 use crate::price::hit;
 use crate::price::sensitivity::Sensitivity;
 use crate::price::setting::Setting;
@@ -9,7 +9,7 @@ use crate::terms::{Contract, Direction, Knock, Payoff, RebatePaid, TermSheet};
 
 /// What one leg pays.
 #[derive(Clone, Copy, Debug)]
-enum Pays {
+pub(crate) enum Pays {
     /// A payoff at expiry, under an event.
     AtExpiry(Payoff, Event),
     /// Cash at the moment of touching.
@@ -21,8 +21,8 @@ enum Pays {
 /// An amount of something paid.
 #[derive(Clone, Copy, Debug)]
 pub(crate) struct Leg {
-    amount: f64,
-    pays: Pays,
+    pub(crate) amount: f64,
+    pub(crate) pays: Pays,
 }
 
 /// Nothing.
@@ -74,7 +74,7 @@ impl Leg {
             return R::of(0.0);
         }
         let unit = match self.pays {
-            Pays::AtExpiry(payoff, event) => event::value(setting, levels, payoff, event),
+            Pays::AtExpiry(payoff, event) => levels.claim(setting, payoff, event).worth(setting).value,
             Pays::AtHit => hit::value(setting, levels),
             Pays::Now => R::of(1.0),
         };
@@ -87,7 +87,7 @@ impl Leg {
             return Sensitivity::none();
         }
         let unit = match self.pays {
-            Pays::AtExpiry(payoff, event) => event::sensitivity(setting, levels, payoff, event),
+            Pays::AtExpiry(payoff, event) => levels.claim(setting, payoff, event).sensitivity(setting),
             Pays::AtHit => hit::sensitivity(setting, levels),
             Pays::Now => Sensitivity { value: R::of(1.0), ..Sensitivity::none() },
         };

@@ -4,6 +4,7 @@
 //! ([`hit`]); a payoff under an event is one or two straight lines paid in strips ([`strip`]), plain or mirrored
 //! at the barrier ([`sensitivity`]).
 
+mod bound;
 mod event;
 mod greeks;
 mod hit;
@@ -16,6 +17,7 @@ mod setting;
 mod strip;
 mod valuation;
 
+pub use bound::{BoundedPrice, bounded_price};
 pub use greeks::Greeks;
 pub use profile::{BarrierProfile, barrier_profile};
 pub use reference::{reference_greeks, reference_price};

@@ -52,6 +52,8 @@ struct Bell<R> {
     height: R,
     slope: R,
     origin: R,
+    /// From the origin to the far end, if there is one.
+    to_far: R,
     step: f64,
     from: R,
     to: R,
@@ -71,28 +73,32 @@ impl<R: Functions> Bell<R> {
             _ => R::of(reach),
         };
         let length = far.map(|(_, length)| length);
+        let whole = length.unwrap_or(zero);
         let slope = decay(end);
         if slope >= zero {
             let to = within(reach::<R>(slope.nearest()), length);
-            return Bell { height: end.density, slope, origin: zero, step: 1.0, from: zero, to };
+            return Bell { height: end.density, slope, origin: zero, to_far: whole, step: 1.0, from: zero, to };
         }
         if let Some((far, length)) = far {
             let slope = -decay(far);
             if slope >= zero {
                 let to = within(reach::<R>(slope.nearest()), Some(length));
                 let height = far.density * per_share(far.at);
-                return Bell { height, slope, origin: length, step: -1.0, from: zero, to };
+                return Bell { height, slope, origin: length, to_far: zero, step: -1.0, from: zero, to };
             }
         }
         let half = reach::<R>(0.0);
+        // By the far end's own score: the difference of two long ways would lose the short one between them.
+        let to_far = far.map_or(zero, |(far, _)| decay(far));
         let weight = if payoff.by_share { end.share_weight / R::of(end.at) } else { end.cash_weight };
         Bell {
             height: R::inv_root_two_pi() * weight,
             slope: zero,
             origin: -slope,
+            to_far,
             step: 1.0,
             from: slope.larger(R::of(-half)),
-            to: within(half, length.map(|length| length + slope)),
+            to: within(half, far.map(|_| to_far)),
         }
     }
 
@@ -151,23 +157,20 @@ struct Survival<R> {
     rate: R,
     /// The barrier's distance from the end of the strip, in standard deviations.
     from_end: R,
-    /// 1 if it grows outwards, -1 if it shrinks.
-    outwards: f64,
+    /// Whether it is the far end of the strip.
+    far: bool,
 }
 
 impl<R: Functions> Survival<R> {
     fn new(setting: &Setting<R>, end: &End<R>, barrier: f64, length: Option<R>) -> Survival<R> {
         let distance = |from: f64| R::ln_ratio(barrier, from).magnitude() / setting.deviation;
-        Survival {
-            rate: distance(setting.spot).times(2.0),
-            // A strip with two ends runs from the strike to the barrier.
-            from_end: length.unwrap_or_else(|| distance(end.at)),
-            outwards: if length.is_some() { -1.0 } else { 1.0 },
-        }
+        Survival { rate: distance(setting.spot).times(2.0), from_end: distance(end.at), far: length.is_some() }
     }
 
     fn probability(&self, bell: &Bell<R>, u: R) -> R {
-        let origin = self.from_end + bell.origin.times(self.outwards);
-        -(-self.rate * (origin + u.times(self.outwards * bell.step))).expm1()
+        // A strip with two ends runs from the strike to the barrier.
+        let step = u.times(bell.step);
+        let way = if self.far { bell.to_far - step } else { self.from_end + bell.origin + step };
+        -(-self.rate * way).expm1()
     }
 }

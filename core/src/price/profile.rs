@@ -1,7 +1,7 @@
 //! Where a contract stands against its barrier.
 
 use crate::error::Result;
-use crate::price::event::{self, Event, Levels};
+use crate::price::event::{Event, Levels};
 use crate::price::legs::touched_now;
 use crate::price::setting::Setting;
 use crate::special::ln_ratio;
@@ -50,7 +50,7 @@ pub fn barrier_profile(sheet: &TermSheet, market: &Market) -> Result<BarrierProf
     }
     let levels = Levels { direction, strike: sheet.barrier, barrier: sheet.barrier };
     let setting = Setting::<f64>::undiscounted(&market, sheet.expiry);
-    let touch_probability = event::value(&setting, &levels, Payoff::Cash, Event::Touched).min(1.0);
+    let touch_probability = levels.claim(&setting, Payoff::Cash, Event::Touched).worth(&setting).value.min(1.0);
     let distance = ln_ratio(sheet.barrier, market.spot).abs() / (market.vol * libm::sqrt(sheet.expiry));
     Ok(BarrierProfile { touch_probability, distance, gap })
 }

@@ -34,8 +34,8 @@ pub(crate) enum Level {
 pub(crate) struct End<R> {
     pub(crate) level: Level,
     pub(crate) at: f64,
-    cash: Edge<R>,
-    share: Edge<R>,
+    pub(crate) cash: Edge<R>,
+    pub(crate) share: Edge<R>,
     /// `e^(-rT) phi(d2)`; the share's is `at` times this.
     pub(crate) density: R,
     /// Worth of cash and of a share wherever the spot ends.

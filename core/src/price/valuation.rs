@@ -4,8 +4,8 @@ use crate::error::{Error, Result, Status};
 use crate::price::event::Levels;
 use crate::price::legs::Leg;
 use crate::price::setting::Setting;
-use crate::price::{Greeks, reference_greeks};
-use crate::special::Functions;
+use crate::price::{Greeks, reference_greeks, reference_price};
+use crate::special::{Functions, ln_ratio};
 use crate::terms::{Direction, Market, TermSheet};
 
 /// What a contract is worth now.
@@ -50,8 +50,7 @@ use crate::terms::{Direction, Market, TermSheet};
 /// ```
 pub fn price(sheet: &TermSheet, market: &Market) -> Result<f64> {
     let (legs, setting, levels) = parts::<f64>(sheet, market)?;
-    let value = legs[0].value(&setting, &levels) + legs[1].value(&setting, &levels);
-    representable(value, value)
+    settled(sheet, market, &setting, legs[0].value(&setting, &levels) + legs[1].value(&setting, &levels))
 }
 
 /// What a contract is worth now, and every sensitivity of that worth, analytic and in one pass.
@@ -68,13 +67,32 @@ pub fn price(sheet: &TermSheet, market: &Market) -> Result<f64> {
 pub fn greeks(sheet: &TermSheet, market: &Market) -> Result<Greeks> {
     let (legs, setting, levels) = parts::<f64>(sheet, market)?;
     let sum = legs[0].sensitivity(&setting, &levels) + legs[1].sensitivity(&setting, &levels);
-    let greeks = sum.greeks(market.spot, sheet.barrier);
-    if sum.cancelled() {
+    let value = settled(sheet, market, &setting, sum.value)?;
+    let greeks = if sum.cancelled() {
         // The terms of the derivatives cancel where those of the value do; there are digits enough to lose in
         // double-double.
-        return reference_greeks(sheet, market).map(|exact| Greeks { value: greeks.value, ..exact });
+        reference_greeks(sheet, market)?
+    } else {
+        sum.greeks(market.spot, sheet.barrier)
+    };
+    Ok(Greeks { value, ..greeks })
+}
+
+/// The value itself, or the reference path's where the fast path has none that is good enough.
+///
+/// In a deep tail the rounding of the score is magnified by its square, which the conditioning of the value
+/// allows; but near a barrier a value is asked to 1e-13 whatever its conditioning.
+fn settled(sheet: &TermSheet, market: &Market, setting: &Setting<f64>, value: f64) -> Result<f64> {
+    /// Distance to the barrier in standard deviations.
+    const NEAR: f64 = 0.05;
+    /// Of the amounts at stake.
+    const DEEP: f64 = 1e-35;
+    let deep = value > 0.0 && value < DEEP * (1.0 + market.spot + sheet.rebate);
+    let near = |barrier: f64| ln_ratio(barrier, market.spot).abs() < NEAR * setting.deviation;
+    if deep && sheet.contract.direction().is_some() && near(sheet.barrier) {
+        return reference_price(sheet, market);
     }
-    representable(sum.value, greeks)
+    representable(value, value)
 }
 
 pub(crate) fn parts<R: Functions>(sheet: &TermSheet, market: &Market) -> Result<([Leg; 2], Setting<R>, Levels)> {
