@@ -55,9 +55,9 @@ def line(payoff, strike):
 
 
 def legs(contract, paid, touched_now):
-    """What the contract pays: (payoff or "hit" or "now", event), a cash payoff meaning the rebate if marked so.
+    """What the contract pays: legs (is_rebate, what, event).
 
-    Each leg is (is_rebate, what, event) with event one of always, touched, untouched.
+    what is a payoff, "hit" (cash at the hit) or "now" (cash now); event is always, touched or untouched.
     """
     if contract.kind == "vanilla":
         parts = [(False, contract.payoff, "always")]
