@@ -178,6 +178,9 @@ impl<R: Functions> Claim<R> {
             self.image.as_ref().map_or_else(Sensitivity::none, |image| of(image).reflected(setting, self.barrier));
         let sum = if self.event == Event::Untouched { plain - image } else { plain + image };
         let worth = self.worth(setting);
-        Sensitivity { value: worth.value, delicate: sum.delicate || worth.integrated, ..sum }
+        // The density at the strike can vanish by itself, with the value of a digital far from vanishing.
+        let strike = Sum { value: sum.strike.magnitude(), terms: plain.strike.magnitude() + image.strike.magnitude() };
+        let delicate = sum.delicate || worth.integrated || strike.cancelled();
+        Sensitivity { value: worth.value, delicate, ..sum }
     }
 }
