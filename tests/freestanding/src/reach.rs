@@ -84,6 +84,7 @@ fn one_contract() {
     keep(price::price(&sheet, &market));
     keep(price::greeks(&sheet, &market).map(Greeks::to_array));
     keep(price::barrier_profile(&sheet, &market));
+    keep(price::bounded_price(&sheet, &market));
     keep(price::reference_price(&sheet, &market));
     keep(price::reference_greeks(&sheet, &market).map(Greeks::to_array));
 }
