@@ -37,22 +37,26 @@ pub enum Status {
     Overflow = 20,
     /// The code of a law of Brownian motion is not one of [`crate::batch::Quantity`]'s.
     Quantity = 30,
-    /// `drift` must be finite, and moderate against `vol` (see [`crate::brownian::Law::new`]).
+    /// `drift` must be within plus and minus 1e75.
     Drift = 31,
-    /// `horizon` must be positive and finite.
+    /// `horizon` must be from 1e-75 to 1e75.
     Horizon = 32,
-    /// `level` must be finite, and on the side of the start that the question needs.
+    /// `level` must be within plus and minus 1e75, and not 0 where its density is asked for.
     Level = 33,
-    /// `terminal` must be finite.
+    /// `terminal` must be within plus and minus 1e75.
     Terminal = 34,
     /// `time` must be at least 0.
     Time = 35,
     /// `probability` must be from 0 to 1.
     Probability = 36,
-    /// `discount_rate` must be finite.
+    /// `discount_rate` must be within plus and minus 1e75.
     DiscountRate = 37,
     /// `uniform` must be strictly between 0 and 1.
     Uniform = 38,
+    /// `vol` of a law of Brownian motion must be from 1e-75 to 1e75.
+    LawVol = 39,
+    /// `other_drift` must be within plus and minus 1e75.
+    OtherDrift = 40,
     /// A required pointer is null.
     NullPointer = 100,
     /// A column is shorter than the call needs.
@@ -63,7 +67,7 @@ pub enum Status {
 
 impl Status {
     /// Every status, in the order of the numbers.
-    pub const ALL: [Status; 25] = [
+    pub const ALL: [Status; 27] = [
         Status::Ok,
         Status::Contract,
         Status::RebatePaid,
@@ -86,6 +90,8 @@ impl Status {
         Status::Probability,
         Status::DiscountRate,
         Status::Uniform,
+        Status::LawVol,
+        Status::OtherDrift,
         Status::NullPointer,
         Status::ColumnLength,
         Status::Internal,
@@ -112,7 +118,7 @@ impl Status {
             Status::Barrier => "barrier",
             Status::Rebate => "rebate",
             Status::Expiry => "expiry",
-            Status::Vol => "vol",
+            Status::Vol | Status::LawVol => "vol",
             Status::Rate => "rate",
             Status::Dividend => "dividend",
             Status::Quantity => "quantity",
@@ -124,6 +130,7 @@ impl Status {
             Status::Probability => "probability",
             Status::DiscountRate => "discount_rate",
             Status::Uniform => "uniform",
+            Status::OtherDrift => "other_drift",
         }
     }
 
@@ -144,14 +151,16 @@ impl Status {
             Status::Dividend => "dividend must be from -1000 to 1000",
             Status::Overflow => "the answer is beyond the range of a binary64 number",
             Status::Quantity => "quantity is not one that is known",
-            Status::Drift => "drift must be finite",
-            Status::Horizon => "horizon must be positive and finite",
-            Status::Level => "level must be finite and on the side of the start that is asked about",
-            Status::Terminal => "terminal must be finite",
+            Status::Drift => "drift must be from -1e75 to 1e75",
+            Status::Horizon => "horizon must be from 1e-75 to 1e75",
+            Status::Level => "level must be from -1e75 to 1e75, and not 0 for a density of its time",
+            Status::Terminal => "terminal must be from -1e75 to 1e75",
             Status::Time => "time must be at least 0",
             Status::Probability => "probability must be from 0 to 1",
-            Status::DiscountRate => "discount_rate must be finite",
+            Status::DiscountRate => "discount_rate must be from -1e75 to 1e75",
             Status::Uniform => "uniform must be strictly between 0 and 1",
+            Status::LawVol => "vol must be from 1e-75 to 1e75",
+            Status::OtherDrift => "other_drift must be from -1e75 to 1e75",
             Status::NullPointer => "a required pointer is null",
             Status::ColumnLength => "a column is shorter than the call needs",
             Status::Internal => "a fault inside the library was caught at its border",

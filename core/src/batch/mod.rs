@@ -2,6 +2,9 @@
 
 mod book;
 mod column;
+mod law;
 
+pub use crate::brownian::Quantity;
 pub use book::{Book, GreekColumns, ProfileColumns, barrier_profile, greeks, price};
 pub use column::{Column, ColumnMut};
+pub use law::{LawColumns, law, law_value};

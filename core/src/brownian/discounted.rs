@@ -71,7 +71,7 @@ impl<R: Functions> DiscountedPassage<R> {
             || (root_squared < variance.square().times(SEAM_ROOT) && root_squared * horizon < variance)
         {
             let tilt = root_squared.times(-0.5) * horizon / variance;
-            let [value, first, second] = moments(distance / deviation, tilt, exponent);
+            let [value, first, second] = moments(distance / deviation, tilt, drift * distance / variance);
             return DiscountedPassage { value, density, form: Form::Integral { moments: [first, second] } };
         }
         let root = root_squared.sqrt();
@@ -88,25 +88,35 @@ impl<R: Functions> DiscountedPassage<R> {
     }
 }
 
-/// `2 exp(nu h / v^2)` times the integrals over `y > start` of `phi(y) exp(tilt (start / y)^2) / y^(2 k)`, k = 0, 1, 2,
-/// where `exponent` is that of the whole integrand at its start.
+/// `2 exp(nu h / v^2)` times the integrals over `y > start` of `phi(y) exp(tilt (start / y)^2) / y^(2 k)`, k = 0, 1, 2;
+/// `prefactor` is `nu h / v^2`.
 ///
 /// In `ln y` the integrand has no kink, no singularity and one scale at its start.
-fn moments<R: Functions>(start: R, tilt: R, exponent: R) -> [R; 3] {
+fn moments<R: Functions>(start: R, tilt: R, prefactor: R) -> [R; 3] {
     let square = start.square();
     let one = R::of(1.0);
     let length = 0.5 * special::log1p(2.0 * R::NEGLIGIBLE / square.nearest());
     let finest = 2.0 / (1.0 + square.nearest() + 2.0 * tilt.magnitude().nearest());
+    // Near the level the value is that of certain touching and a little more: only the little is integrated.
+    let near = start < one;
+    let exponent = prefactor - square.times(0.5);
     let mut sums = [R::of(0.0); 3];
     integrate(R::of(0.0), R::of(length), finest, WIDEST_PANEL, |node, weight| {
         // y = start (1 + growth)^(1/2)
         let growth = node.times(2.0).expm1();
-        let value = weight * (exponent - (square * growth).times(0.5) - tilt * growth / (one + growth)).exp();
+        let lift = tilt / (one + growth);
+        let plain = exponent - (square * growth).times(0.5);
+        let value = weight * (plain + lift).exp();
         let y_squared = square * (one + growth);
         let y = y_squared.sqrt();
-        sums[0] = sums[0] + value * y;
+        let first = if near { weight * plain.exp() * lift.expm1() } else { value };
+        sums[0] = sums[0] + first * y;
         sums[1] = sums[1] + value / y;
         sums[2] = sums[2] + value / (y * y_squared);
     });
-    sums.map(|sum| R::inv_root_two_pi().times(2.0) * sum)
+    let mut sums = sums.map(|sum| R::inv_root_two_pi().times(2.0) * sum);
+    if near {
+        sums[0] = sums[0] + density(exponent).times(2.0) * start.mills();
+    }
+    sums
 }

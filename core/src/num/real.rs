@@ -35,6 +35,11 @@ pub(crate) trait Real:
         if self < Self::of(0.0) { -self } else { self }
     }
 
+    /// The smaller of two.
+    fn smaller(self, other: Self) -> Self {
+        if other < self { other } else { self }
+    }
+
     /// The larger of two.
     fn larger(self, other: Self) -> Self {
         if self < other { other } else { self }

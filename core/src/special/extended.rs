@@ -25,6 +25,7 @@ fn twice_atanh(f: DoubleDouble) -> DoubleDouble {
 impl Functions for DoubleDouble {
     const CANCELLED: f64 = 1e-12;
     const NEGLIGIBLE: f64 = 60.0;
+    const POLISHED: bool = true;
 
     fn exp(self) -> DoubleDouble {
         if self.high() > 710.0 {

@@ -12,6 +12,9 @@ pub(crate) trait Functions: Real {
     /// An integrand is negligible where its exponent has lost this many units.
     const NEGLIGIBLE: f64;
 
+    /// Whether an answer found in binary64 is to be polished by Newton's method.
+    const POLISHED: bool;
+
     /// Exponential.
     fn exp(self) -> Self;
     /// Exponential less 1.
@@ -27,6 +30,7 @@ pub(crate) trait Functions: Real {
 impl Functions for f64 {
     const CANCELLED: f64 = 1.0 / 32.0;
     const NEGLIGIBLE: f64 = 45.0;
+    const POLISHED: bool = false;
 
     fn exp(self) -> f64 {
         special::exp_sum(self, 0.0)

@@ -6,6 +6,7 @@ mod extended_tables;
 mod functions;
 mod logarithm;
 mod mills;
+mod mills_slope;
 mod normal;
 mod quantile;
 
@@ -15,6 +16,7 @@ pub(crate) use functions::Functions;
 pub use logarithm::{ln, ln_ratio, log1p};
 pub use mills::mills_ratio;
 pub(crate) use mills::mills_ratio_lane;
+pub(crate) use mills_slope::mills_slope;
 pub(crate) use normal::INV_ROOT_TWO_PI;
 pub use normal::{normal_cdf, normal_log_tail, normal_pdf, normal_tail};
 pub use quantile::normal_quantile;

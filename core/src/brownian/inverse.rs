@@ -1,0 +1,125 @@
+//! Quantiles that have no formula: Newton's method, kept within a bracket.
+
+use crate::brownian::Walk;
+use crate::special::{Functions, exp, ln};
+
+/// A distribution on the positive half-line, with both of its tails and its density.
+struct Law<F: Fn(f64) -> [f64; 3]> {
+    below_above_density: F,
+}
+
+impl<F: Fn(f64) -> [f64; 3]> Law<F> {
+    /// The point below which `probability` lies; `complement` is what lies above.
+    ///
+    /// Newton's method in the logarithms of point and probability, in which tails are straight; a step that leaves
+    /// the bracket is replaced by one that halves it, so the search ends whatever the shape.
+    fn quantile(&self, probability: f64, complement: f64, guess: f64) -> f64 {
+        let (mut low, mut high) = (0.0, f64::INFINITY);
+        let mut at = guess;
+        for _ in 0..300 {
+            let [below, above, density] = (self.below_above_density)(at);
+            // The smaller tail carries the digits.
+            let (ratio, steepness) = if probability <= complement {
+                (below / probability, at * density / below)
+            } else {
+                (complement / above, at * density / above)
+            };
+            if ratio < 1.0 {
+                low = at;
+            } else {
+                high = at;
+            }
+            let step = -ln(ratio) / steepness;
+            let mut next = at * exp(step);
+            if !(next > low && next < high && step.abs() < 3.0) {
+                next = if high.is_infinite() {
+                    at * 8.0
+                } else if low == 0.0 {
+                    at / 8.0
+                } else {
+                    libm::sqrt(low) * libm::sqrt(high)
+                };
+            }
+            if (next - at).abs() <= f64::EPSILON * at || next == 0.0 || next.is_infinite() {
+                return next;
+            }
+            at = next;
+        }
+        at
+    }
+}
+
+impl<R: Functions> Walk<R> {
+    fn rough(&self) -> Walk<f64> {
+        Walk::new(self.drift.nearest(), self.vol.nearest(), self.horizon.nearest())
+    }
+
+    /// The level that the maximum stays below with `probability`; `complement` is `1 - probability`.
+    pub(crate) fn max_quantile(&self, probability: R, complement: R) -> R {
+        let zero = R::of(0.0);
+        if probability <= zero {
+            return zero;
+        }
+        if complement <= zero {
+            return R::of(f64::INFINITY);
+        }
+        let walk = self.rough();
+        let law = Law { below_above_density: |a| [walk.max_cdf(a), walk.max_tail(a), walk.max_pdf(a)] };
+        let guess = walk.deviation + walk.mean.max(0.0);
+        let mut level = R::of(law.quantile(probability.nearest(), complement.nearest(), guess));
+        if R::POLISHED {
+            for _ in 0..2 {
+                let excess = if probability < complement {
+                    self.max_cdf(level) - probability
+                } else {
+                    complement - self.max_tail(level)
+                };
+                level = level - excess / self.max_pdf(level).larger(R::of(f64::MIN_POSITIVE));
+            }
+        }
+        level
+    }
+
+    /// The time by which a level is touched with `probability`; infinite if that never comes.
+    pub(crate) fn first_passage_quantile(&self, level: R, probability: R) -> R {
+        let (zero, one) = (R::of(0.0), R::of(1.0));
+        if probability <= zero || level == zero {
+            return zero;
+        }
+        let (walk, distance) = self.towards(level);
+        let ever = walk.ever(distance);
+        if probability >= ever {
+            return R::of(f64::INFINITY);
+        }
+        // Given that the level is ever touched, the time has the law that belongs to a drift towards it.
+        let walk = Walk { drift: walk.drift.magnitude(), ..walk };
+        let probability = probability / ever;
+        let complement = one - probability;
+        let rough = walk.rough();
+        let way = distance.nearest();
+        let law = Law {
+            below_above_density: |time| {
+                let walk = rough.until(time);
+                [walk.max_tail(way), walk.max_cdf(way), walk.first_passage_pdf(way, time)]
+            },
+        };
+        let guess = if rough.drift * way > rough.vol * rough.vol {
+            way / rough.drift
+        } else {
+            (way / rough.vol) * (way / rough.vol)
+        };
+        let mut time = R::of(law.quantile(probability.nearest(), complement.nearest(), guess));
+        if R::POLISHED {
+            for _ in 0..2 {
+                let then = walk.until(time);
+                let excess = if probability < complement {
+                    then.max_tail(distance) - probability
+                } else {
+                    complement - then.max_cdf(distance)
+                };
+                time = time - excess / walk.first_passage_pdf(distance, time).larger(R::of(f64::MIN_POSITIVE));
+            }
+        }
+        time
+    }
+}
