@@ -8,12 +8,13 @@
 //     c++ -std=c++17 -I ffi/include examples/cpp/legacy_pricer.cpp -o legacy_pricer target/release/libfloodmark.a -lpthread -ldl -lm
 //     ./legacy_pricer
 //
-// Prints the quote, the book with its risk and statuses, and totals. The exit status is 1 if a row was refused that
+// Prints the quote, the chance that a path was over the barrier unseen, the book with its risk and statuses, and totals. The exit status is 1 if a row was refused that
 // should not have been. Model values, not advice.
 
 #include <floodmark.h>
 
 #include <array>
+#include <cmath>
 #include <cstddef>
 #include <cstdint>
 #include <cstdio>
@@ -98,6 +99,17 @@ double quote_up_and_out_call(double spot, double strike, double barrier, double 
     return value;
 }
 
+// How likely a simulated path slipped over the barrier between two of its dates, which it did not look at.
+double slipped_over(double from, double to, double barrier, double vol, double time) {
+    double probability = 0.0;
+    const std::int32_t status = floodmark_bridge_crossing(RATE - DIVIDEND - vol * vol / 2.0, vol, time,
+                                                          std::log(to / from), std::log(barrier / from), &probability);
+    if (status != FLOODMARK_STATUS_OK) {
+        throw std::invalid_argument(rule(status));
+    }
+    return probability;
+}
+
 // A column of a vector of structures: the member of the first, and the way to the next.
 template <class Structure>
 FloodmarkNumbers numbers(const std::vector<Structure> &rows, double Structure::*member) {
@@ -169,6 +181,9 @@ int main() try {
     } catch (const std::invalid_argument &error) {
         std::printf("quote refused: %s\n", error.what());
     }
+
+    std::printf("over the barrier between two dates %.6f\n",
+                slipped_over(41.5, 41.5 * std::exp(0.05), 55.0, 0.34, 0.25));
 
     std::vector<Risk> risks;
     const std::size_t refused = manage(BOOK, risks);

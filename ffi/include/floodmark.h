@@ -60,22 +60,26 @@ enum FloodmarkStatus {
     FLOODMARK_STATUS_OVERFLOW = 20,
     /** quantity is not one that is known */
     FLOODMARK_STATUS_QUANTITY = 30,
-    /** drift must be finite */
+    /** drift must be from -1e75 to 1e75 */
     FLOODMARK_STATUS_DRIFT = 31,
-    /** horizon must be positive and finite */
+    /** horizon must be from 1e-75 to 1e75 */
     FLOODMARK_STATUS_HORIZON = 32,
-    /** level must be finite and on the side of the start that is asked about */
+    /** level must be from -1e75 to 1e75, and not 0 for a density of its time */
     FLOODMARK_STATUS_LEVEL = 33,
-    /** terminal must be finite */
+    /** terminal must be from -1e75 to 1e75 */
     FLOODMARK_STATUS_TERMINAL = 34,
     /** time must be at least 0 */
     FLOODMARK_STATUS_TIME = 35,
     /** probability must be from 0 to 1 */
     FLOODMARK_STATUS_PROBABILITY = 36,
-    /** discount_rate must be finite */
+    /** discount_rate must be from -1e75 to 1e75 */
     FLOODMARK_STATUS_DISCOUNT_RATE = 37,
     /** uniform must be strictly between 0 and 1 */
     FLOODMARK_STATUS_UNIFORM = 38,
+    /** vol must be from 1e-75 to 1e75 */
+    FLOODMARK_STATUS_LAW_VOL = 39,
+    /** other_drift must be from -1e75 to 1e75 */
+    FLOODMARK_STATUS_OTHER_DRIFT = 40,
     /** a required pointer is null */
     FLOODMARK_STATUS_NULL_POINTER = 100,
     /** a column is shorter than the call needs */
@@ -188,6 +192,62 @@ enum FloodmarkRebatePaid {
     FLOODMARK_REBATE_PAID_HIT = 1,
     /** at expiry */
     FLOODMARK_REBATE_PAID_EXPIRY = 2,
+};
+
+/**
+ * What floodmark_law_columns can be asked, each with the function that answers the same for one law.
+ */
+enum FloodmarkQuantity {
+    /** floodmark_terminal_pdf(drift, vol, horizon, terminal, value) */
+    FLOODMARK_QUANTITY_TERMINAL_PDF = 0,
+    /** floodmark_terminal_cdf(drift, vol, horizon, terminal, value) */
+    FLOODMARK_QUANTITY_TERMINAL_CDF = 1,
+    /** floodmark_terminal_quantile(drift, vol, horizon, probability, value) */
+    FLOODMARK_QUANTITY_TERMINAL_QUANTILE = 2,
+    /** floodmark_max_pdf(drift, vol, horizon, level, value) */
+    FLOODMARK_QUANTITY_MAX_PDF = 3,
+    /** floodmark_max_cdf(drift, vol, horizon, level, value) */
+    FLOODMARK_QUANTITY_MAX_CDF = 4,
+    /** floodmark_max_tail(drift, vol, horizon, level, value) */
+    FLOODMARK_QUANTITY_MAX_TAIL = 5,
+    /** floodmark_max_quantile(drift, vol, horizon, probability, value) */
+    FLOODMARK_QUANTITY_MAX_QUANTILE = 6,
+    /** floodmark_min_pdf(drift, vol, horizon, level, value) */
+    FLOODMARK_QUANTITY_MIN_PDF = 7,
+    /** floodmark_min_cdf(drift, vol, horizon, level, value) */
+    FLOODMARK_QUANTITY_MIN_CDF = 8,
+    /** floodmark_min_tail(drift, vol, horizon, level, value) */
+    FLOODMARK_QUANTITY_MIN_TAIL = 9,
+    /** floodmark_min_quantile(drift, vol, horizon, probability, value) */
+    FLOODMARK_QUANTITY_MIN_QUANTILE = 10,
+    /** floodmark_joint_max_cdf(drift, vol, horizon, terminal, level, value) */
+    FLOODMARK_QUANTITY_JOINT_MAX_CDF = 11,
+    /** floodmark_joint_max_pdf(drift, vol, horizon, terminal, level, value) */
+    FLOODMARK_QUANTITY_JOINT_MAX_PDF = 12,
+    /** floodmark_joint_min_cdf(drift, vol, horizon, terminal, level, value) */
+    FLOODMARK_QUANTITY_JOINT_MIN_CDF = 13,
+    /** floodmark_joint_min_pdf(drift, vol, horizon, terminal, level, value) */
+    FLOODMARK_QUANTITY_JOINT_MIN_PDF = 14,
+    /** floodmark_survival(drift, vol, horizon, level, value) */
+    FLOODMARK_QUANTITY_SURVIVAL = 15,
+    /** floodmark_first_passage_pdf(drift, vol, horizon, level, time, value) */
+    FLOODMARK_QUANTITY_FIRST_PASSAGE_PDF = 16,
+    /** floodmark_first_passage_cdf(drift, vol, horizon, level, time, value) */
+    FLOODMARK_QUANTITY_FIRST_PASSAGE_CDF = 17,
+    /** floodmark_first_passage_quantile(drift, vol, horizon, level, probability, value) */
+    FLOODMARK_QUANTITY_FIRST_PASSAGE_QUANTILE = 18,
+    /** floodmark_discounted_first_passage(drift, vol, horizon, level, discount_rate, value) */
+    FLOODMARK_QUANTITY_DISCOUNTED_FIRST_PASSAGE = 19,
+    /** floodmark_bridge_crossing(drift, vol, horizon, terminal, level, value) */
+    FLOODMARK_QUANTITY_BRIDGE_CROSSING = 20,
+    /** floodmark_sample_terminal(drift, vol, horizon, uniform, value) */
+    FLOODMARK_QUANTITY_SAMPLE_TERMINAL = 21,
+    /** floodmark_sample_max(drift, vol, horizon, terminal, uniform, value) */
+    FLOODMARK_QUANTITY_SAMPLE_MAX = 22,
+    /** floodmark_sample_min(drift, vol, horizon, terminal, uniform, value) */
+    FLOODMARK_QUANTITY_SAMPLE_MIN = 23,
+    /** floodmark_drift_weight(drift, vol, horizon, terminal, other_drift, value) */
+    FLOODMARK_QUANTITY_DRIFT_WEIGHT = 24,
 };
 
 
@@ -450,6 +510,36 @@ typedef struct FloodmarkProfileColumns {
     struct FloodmarkResults gap;
 } FloodmarkProfileColumns;
 
+/**
+ * The inputs of a quantity of the law of W_t = drift t + vol B_t on [0, horizon], one law a row.
+ */
+typedef struct FloodmarkLawColumns {
+    /**
+     * How many rows there are.
+     */
+    size_t rows;
+    /**
+     * Drifts.
+     */
+    struct FloodmarkNumbers drift;
+    /**
+     * Volatilities.
+     */
+    struct FloodmarkNumbers vol;
+    /**
+     * Horizons.
+     */
+    struct FloodmarkNumbers horizon;
+    /**
+     * What the quantity's own function takes after the horizon.
+     */
+    struct FloodmarkNumbers first;
+    /**
+     * What it takes after that; ignored, and may be null, where it takes nothing more.
+     */
+    struct FloodmarkNumbers second;
+} FloodmarkLawColumns;
+
 #ifdef __cplusplus
 extern "C" {
 #endif // __cplusplus
@@ -642,6 +732,442 @@ int32_t floodmark_barrier_profile_columns(const struct FloodmarkBook *book,
                                           const struct FloodmarkProfileColumns *profile,
                                           struct FloodmarkStatuses status,
                                           size_t *refused);
+
+/**
+ * How dense is the end point W_T at terminal?
+ *
+ * Formula: the density of the normal law with mean drift horizon and deviation vol sqrt(horizon).
+ *
+ * Domain: terminal from -1e75 to 1e75; drift from -1e75 to 1e75; vol and horizon from 1e-75 to 1e75.
+ *
+ * Errors: the status of the first input out of its domain; FLOODMARK_STATUS_OVERFLOW where the answer is beyond
+ * binary64; FLOODMARK_STATUS_NULL_POINTER if value is null. value is then left alone.
+ *
+ * Memory: value is null, or aligned and writable.
+ */
+int32_t floodmark_terminal_pdf(double drift,
+                               double vol,
+                               double horizon,
+                               double terminal,
+                               double *value);
+
+/**
+ * How likely does the motion end at or below terminal?
+ *
+ * Formula: P(W_T <= terminal).
+ *
+ * Domain: terminal from -1e75 to 1e75; the law as in floodmark_terminal_pdf.
+ *
+ * Errors: as floodmark_terminal_pdf.
+ *
+ * Memory: value is null, or aligned and writable.
+ */
+int32_t floodmark_terminal_cdf(double drift,
+                               double vol,
+                               double horizon,
+                               double terminal,
+                               double *value);
+
+/**
+ * Below which point does the motion end with this probability?
+ *
+ * Formula: the terminal for which P(W_T <= terminal) = probability; infinite for 0 and 1.
+ *
+ * Domain: probability from 0 to 1; the law as in floodmark_terminal_pdf.
+ *
+ * Errors: as floodmark_terminal_pdf.
+ *
+ * Memory: value is null, or aligned and writable.
+ */
+int32_t floodmark_terminal_quantile(double drift,
+                                    double vol,
+                                    double horizon,
+                                    double probability,
+                                    double *value);
+
+/**
+ * How dense is the running maximum M_T at level?
+ *
+ * Formula: d/dlevel P(M_T <= level); 0 on the side of the start where the maximum cannot be.
+ *
+ * Domain: level from -1e75 to 1e75; the law as in floodmark_terminal_pdf.
+ *
+ * Errors: as floodmark_terminal_pdf.
+ *
+ * Memory: value is null, or aligned and writable.
+ */
+int32_t floodmark_max_pdf(double drift, double vol, double horizon, double level, double *value);
+
+/**
+ * How likely does the running maximum stay at or below level?
+ *
+ * Formula: P(M_T <= level).
+ *
+ * Domain: level from -1e75 to 1e75; the law as in floodmark_terminal_pdf.
+ *
+ * Errors: as floodmark_terminal_pdf.
+ *
+ * Memory: value is null, or aligned and writable.
+ */
+int32_t floodmark_max_cdf(double drift, double vol, double horizon, double level, double *value);
+
+/**
+ * How likely does the running maximum reach or lie above level?
+ *
+ * Formula: P(M_T >= level), not formed as 1 - P(M_T <= level).
+ *
+ * Domain: level from -1e75 to 1e75; the law as in floodmark_terminal_pdf.
+ *
+ * Errors: as floodmark_terminal_pdf.
+ *
+ * Memory: value is null, or aligned and writable.
+ */
+int32_t floodmark_max_tail(double drift, double vol, double horizon, double level, double *value);
+
+/**
+ * Below which level does the running maximum stay with this probability?
+ *
+ * Formula: the level for which P(M_T <= level) = probability; 0 at 0, infinite at 1.
+ *
+ * Domain: probability from 0 to 1; the law as in floodmark_terminal_pdf.
+ *
+ * Errors: as floodmark_terminal_pdf.
+ *
+ * Memory: value is null, or aligned and writable.
+ */
+int32_t floodmark_max_quantile(double drift,
+                               double vol,
+                               double horizon,
+                               double probability,
+                               double *value);
+
+/**
+ * How dense is the running minimum m_T at level?
+ *
+ * Formula: d/dlevel P(m_T <= level); 0 on the side of the start where the minimum cannot be.
+ *
+ * Domain: level from -1e75 to 1e75; the law as in floodmark_terminal_pdf.
+ *
+ * Errors: as floodmark_terminal_pdf.
+ *
+ * Memory: value is null, or aligned and writable.
+ */
+int32_t floodmark_min_pdf(double drift, double vol, double horizon, double level, double *value);
+
+/**
+ * How likely does the running minimum stay at or below level?
+ *
+ * Formula: P(m_T <= level).
+ *
+ * Domain: level from -1e75 to 1e75; the law as in floodmark_terminal_pdf.
+ *
+ * Errors: as floodmark_terminal_pdf.
+ *
+ * Memory: value is null, or aligned and writable.
+ */
+int32_t floodmark_min_cdf(double drift, double vol, double horizon, double level, double *value);
+
+/**
+ * How likely does the running minimum stay at or above level?
+ *
+ * Formula: P(m_T >= level), not formed as 1 - P(m_T <= level).
+ *
+ * Domain: level from -1e75 to 1e75; the law as in floodmark_terminal_pdf.
+ *
+ * Errors: as floodmark_terminal_pdf.
+ *
+ * Memory: value is null, or aligned and writable.
+ */
+int32_t floodmark_min_tail(double drift, double vol, double horizon, double level, double *value);
+
+/**
+ * Below which level does the running minimum stay with this probability?
+ *
+ * Formula: the level for which P(m_T <= level) = probability; minus infinity at 0, 0 at 1.
+ *
+ * Domain: probability from 0 to 1; the law as in floodmark_terminal_pdf.
+ *
+ * Errors: as floodmark_terminal_pdf.
+ *
+ * Memory: value is null, or aligned and writable.
+ */
+int32_t floodmark_min_quantile(double drift,
+                               double vol,
+                               double horizon,
+                               double probability,
+                               double *value);
+
+/**
+ * How likely does the motion end at or below terminal, its maximum at or below level?
+ *
+ * Formula: P(W_T <= terminal, M_T <= level).
+ *
+ * Domain: terminal and level from -1e75 to 1e75; the law as in floodmark_terminal_pdf.
+ *
+ * Errors: as floodmark_terminal_pdf.
+ *
+ * Memory: value is null, or aligned and writable.
+ */
+int32_t floodmark_joint_max_cdf(double drift,
+                                double vol,
+                                double horizon,
+                                double terminal,
+                                double level,
+                                double *value);
+
+/**
+ * How dense are the end point at terminal and the maximum at level together?
+ *
+ * Formula: the joint density of (W_T, M_T); 0 where no path goes.
+ *
+ * Domain: terminal and level from -1e75 to 1e75; the law as in floodmark_terminal_pdf.
+ *
+ * Errors: as floodmark_terminal_pdf.
+ *
+ * Memory: value is null, or aligned and writable.
+ */
+int32_t floodmark_joint_max_pdf(double drift,
+                                double vol,
+                                double horizon,
+                                double terminal,
+                                double level,
+                                double *value);
+
+/**
+ * How likely does the motion end at or below terminal, its minimum at or below level?
+ *
+ * Formula: P(W_T <= terminal, m_T <= level).
+ *
+ * Domain: terminal and level from -1e75 to 1e75; the law as in floodmark_terminal_pdf.
+ *
+ * Errors: as floodmark_terminal_pdf.
+ *
+ * Memory: value is null, or aligned and writable.
+ */
+int32_t floodmark_joint_min_cdf(double drift,
+                                double vol,
+                                double horizon,
+                                double terminal,
+                                double level,
+                                double *value);
+
+/**
+ * How dense are the end point at terminal and the minimum at level together?
+ *
+ * Formula: the joint density of (W_T, m_T); 0 where no path goes.
+ *
+ * Domain: terminal and level from -1e75 to 1e75; the law as in floodmark_terminal_pdf.
+ *
+ * Errors: as floodmark_terminal_pdf.
+ *
+ * Memory: value is null, or aligned and writable.
+ */
+int32_t floodmark_joint_min_pdf(double drift,
+                                double vol,
+                                double horizon,
+                                double terminal,
+                                double level,
+                                double *value);
+
+/**
+ * How likely is level not touched by the horizon?
+ *
+ * Formula: P(tau > horizon), with tau the first time at level; a level above 0 is watched from below, one below 0
+ * from above; 0 for the level 0.
+ *
+ * Domain: level from -1e75 to 1e75; the law as in floodmark_terminal_pdf.
+ *
+ * Errors: as floodmark_terminal_pdf.
+ *
+ * Memory: value is null, or aligned and writable.
+ */
+int32_t floodmark_survival(double drift,
+                           double vol,
+                           double horizon,
+                           double level,
+                           double *value);
+
+/**
+ * How dense is the first passage through level at time?
+ *
+ * Formula: d/dtime P(tau <= time); the horizon plays no part.
+ *
+ * Domain: level from -1e75 to 1e75, not 0; time at least 0, infinite allowed; the law as in floodmark_terminal_pdf.
+ *
+ * Errors: as floodmark_terminal_pdf.
+ *
+ * Memory: value is null, or aligned and writable.
+ */
+int32_t floodmark_first_passage_pdf(double drift,
+                                    double vol,
+                                    double horizon,
+                                    double level,
+                                    double time,
+                                    double *value);
+
+/**
+ * How likely is level touched by time?
+ *
+ * Formula: P(tau <= time); the horizon plays no part.
+ *
+ * Domain: level from -1e75 to 1e75; time at least 0, infinite allowed; the law as in floodmark_terminal_pdf.
+ *
+ * Errors: as floodmark_terminal_pdf.
+ *
+ * Memory: value is null, or aligned and writable.
+ */
+int32_t floodmark_first_passage_cdf(double drift,
+                                    double vol,
+                                    double horizon,
+                                    double level,
+                                    double time,
+                                    double *value);
+
+/**
+ * By when is level touched with this probability?
+ *
+ * Formula: the time for which P(tau <= time) = probability; infinite where that is never reached.
+ *
+ * Domain: level from -1e75 to 1e75; probability from 0 to 1; the law as in floodmark_terminal_pdf.
+ *
+ * Errors: as floodmark_terminal_pdf.
+ *
+ * Memory: value is null, or aligned and writable.
+ */
+int32_t floodmark_first_passage_quantile(double drift,
+                                         double vol,
+                                         double horizon,
+                                         double level,
+                                         double probability,
+                                         double *value);
+
+/**
+ * What is one unit worth that is paid when level is touched, if that is by the horizon?
+ *
+ * Formula: E[exp(-discount_rate tau); tau <= horizon], for a discount_rate of any sign.
+ *
+ * Domain: level and discount_rate from -1e75 to 1e75; the law as in floodmark_terminal_pdf.
+ *
+ * Errors: as floodmark_terminal_pdf.
+ *
+ * Memory: value is null, or aligned and writable.
+ */
+int32_t floodmark_discounted_first_passage(double drift,
+                                           double vol,
+                                           double horizon,
+                                           double level,
+                                           double discount_rate,
+                                           double *value);
+
+/**
+ * How likely was level touched on the way to a known end point?
+ *
+ * Formula: exp(-2 level (level - terminal) / (vol^2 horizon)); 1 where the end is at or beyond the level.
+ *
+ * Domain: terminal and level from -1e75 to 1e75; the law as in floodmark_terminal_pdf.
+ *
+ * Errors: as floodmark_terminal_pdf.
+ *
+ * Memory: value is null, or aligned and writable.
+ */
+int32_t floodmark_bridge_crossing(double drift,
+                                  double vol,
+                                  double horizon,
+                                  double terminal,
+                                  double level,
+                                  double *value);
+
+/**
+ * How much more likely is a path to terminal under another drift?
+ *
+ * Formula: dP_other/dP = exp(((other_drift - drift) terminal - (other_drift^2 - drift^2) horizon / 2) / vol^2).
+ *
+ * Domain: terminal and other_drift from -1e75 to 1e75; the law as in floodmark_terminal_pdf.
+ *
+ * Errors: as floodmark_terminal_pdf.
+ *
+ * Memory: value is null, or aligned and writable.
+ */
+int32_t floodmark_drift_weight(double drift,
+                               double vol,
+                               double horizon,
+                               double terminal,
+                               double other_drift,
+                               double *value);
+
+/**
+ * Which end point does this uniform number draw?
+ *
+ * Formula: drift horizon + vol sqrt(horizon) N^-1(uniform).
+ *
+ * Domain: uniform strictly between 0 and 1; the law as in floodmark_terminal_pdf.
+ *
+ * Errors: as floodmark_terminal_pdf.
+ *
+ * Memory: value is null, or aligned and writable.
+ */
+int32_t floodmark_sample_terminal(double drift,
+                                  double vol,
+                                  double horizon,
+                                  double uniform,
+                                  double *value);
+
+/**
+ * Which maximum does this uniform number draw, given the end point?
+ *
+ * Formula: (terminal + sqrt(terminal^2 - 2 s^2 ln(uniform))) / 2, s = vol sqrt(horizon).
+ *
+ * Domain: terminal from -1e75 to 1e75; uniform strictly between 0 and 1; the law as in floodmark_terminal_pdf.
+ *
+ * Errors: as floodmark_terminal_pdf.
+ *
+ * Memory: value is null, or aligned and writable.
+ */
+int32_t floodmark_sample_max(double drift,
+                             double vol,
+                             double horizon,
+                             double terminal,
+                             double uniform,
+                             double *value);
+
+/**
+ * Which minimum does this uniform number draw, given the end point?
+ *
+ * Formula: (terminal - sqrt(terminal^2 - 2 s^2 ln(uniform))) / 2, s = vol sqrt(horizon).
+ *
+ * Domain: terminal from -1e75 to 1e75; uniform strictly between 0 and 1; the law as in floodmark_terminal_pdf.
+ *
+ * Errors: as floodmark_terminal_pdf.
+ *
+ * Memory: value is null, or aligned and writable.
+ */
+int32_t floodmark_sample_min(double drift,
+                             double vol,
+                             double horizon,
+                             double terminal,
+                             double uniform,
+                             double *value);
+
+/**
+ * What is this quantity of the law in each row?
+ *
+ * Formula: floodmark_max_cdf for FLOODMARK_QUANTITY_MAX_CDF and so on, row by row. Every row is written; a refused
+ * row gets NaN and its status. refused, unless null, receives how many rows were refused.
+ *
+ * Domain: drift from -1e75 to 1e75; vol and horizon from 1e-75 to 1e75; the rest as the quantity's own function
+ * says.
+ *
+ * Errors of the call: FLOODMARK_STATUS_QUANTITY if quantity is no FLOODMARK_QUANTITY code;
+ * FLOODMARK_STATUS_NULL_POINTER if law is null, or an input column, value or status is null while there are rows;
+ * then nothing is written.
+ *
+ * Memory: As floodmark_price_columns; law is null or aligned.
+ */
+int32_t floodmark_law_columns(uint8_t quantity,
+                              const struct FloodmarkLawColumns *law,
+                              struct FloodmarkResults value,
+                              struct FloodmarkStatuses status,
+                              size_t *refused);
 
 #ifdef __cplusplus
 }  // extern "C"

@@ -15,4 +15,6 @@ pub mod column;
 
 pub mod book;
 
+pub mod law;
+
 mod border;

@@ -415,6 +415,45 @@ static void a_status_is_a_sentence(void) {
     CHECK(floodmark_status_sentence(FLOODMARK_STATUS_VOL, 1.0, NULL, 0, NULL) == FLOODMARK_STATUS_NULL_POINTER);
 }
 
+static void a_law_answers_one_by_one_and_in_columns(void) {
+    double drifts[ROWS], levels[2 * ROWS], values[ROWS];
+    int32_t statuses[ROWS];
+    const double vol = 0.3, horizon = 2.0;
+    for (int n = 0; n < ROWS; n += 1) {
+        drifts[n] = 0.05 * (n - 3);
+        levels[2 * n] = 0.1 + 0.1 * n;
+        levels[2 * n + 1] = NAN;
+    }
+    drifts[3] = NAN;
+    FloodmarkLawColumns law = {ROWS, {drifts, 1}, {&vol, 0}, {&horizon, 0}, {levels, 2}, {NULL, 0}};
+    FloodmarkResults value = {values, 1};
+    FloodmarkStatuses status = {statuses, 1};
+    size_t refused = 99;
+    CHECK(floodmark_law_columns(FLOODMARK_QUANTITY_MAX_CDF, &law, value, status, &refused) == FLOODMARK_STATUS_OK);
+    CHECK(refused == 1);
+    for (int n = 0; n < ROWS; n += 1) {
+        double alone = UNTOUCHED;
+        CHECK(floodmark_max_cdf(drifts[n], vol, horizon, levels[2 * n], &alone) == statuses[n]);
+        CHECK(statuses[n] == (n == 3 ? FLOODMARK_STATUS_DRIFT : FLOODMARK_STATUS_OK));
+        CHECK(n == 3 ? isnan(values[n]) && same(alone, UNTOUCHED) : same(values[n], alone));
+    }
+
+    const int32_t null = FLOODMARK_STATUS_NULL_POINTER;
+    FloodmarkResults no_value = {NULL, 1};
+    FloodmarkStatuses no_status = {NULL, 1};
+    values[0] = UNTOUCHED;
+    refused = 99;
+    CHECK(floodmark_law_columns(25, &law, value, status, &refused) == FLOODMARK_STATUS_QUANTITY);
+    CHECK(floodmark_law_columns(FLOODMARK_QUANTITY_MAX_CDF, NULL, value, status, &refused) == null);
+    CHECK(floodmark_law_columns(FLOODMARK_QUANTITY_MAX_CDF, &law, no_value, status, &refused) == null);
+    CHECK(floodmark_law_columns(FLOODMARK_QUANTITY_MAX_CDF, &law, value, no_status, &refused) == null);
+    CHECK(floodmark_law_columns(FLOODMARK_QUANTITY_JOINT_MAX_CDF, &law, value, status, &refused) == null);
+    CHECK(floodmark_max_cdf(0.0, vol, horizon, 0.1, NULL) == null);
+    CHECK(same(values[0], UNTOUCHED) && refused == 99);
+    law.rows = 0;
+    CHECK(floodmark_law_columns(FLOODMARK_QUANTITY_MAX_CDF, &law, no_value, no_status, NULL) == FLOODMARK_STATUS_OK);
+}
+
 int main(void) {
     print_claims();
     a_good_contract_is_answered();
@@ -426,6 +465,7 @@ int main(void) {
     only_wanted_columns_are_written();
     a_missing_column_is_refused_before_anything_is_written();
     a_book_without_rows_needs_no_columns();
+    a_law_answers_one_by_one_and_in_columns();
     every_contract_has_a_text_that_leads_back();
     a_rebate_is_paid_at_hit_at_expiry_or_as_is_natural();
     a_text_that_does_not_fit_is_not_cut();

@@ -1,7 +1,7 @@
 /*
  * Reads the vectors that every language shares and prints what the C library says, for tests/tests/parity.rs to
  * compare with the file: for each row a line "scalar,..." of the calls with plain numbers and a line "column,..." of
- * one call over all rows, as statuses and as the 16 hexadecimal digits of each number.
+ * calls over many rows, as statuses and as the 16 hexadecimal digits of each number.
  */
 #include <floodmark.h>
 
@@ -15,6 +15,14 @@
 
 /* What stands in an output before a scalar call. */
 static const uint64_t UNTOUCHED = UINT64_C(0x0123456789abcdef);
+
+/* A question to the law as it lies in memory. */
+struct law {
+    uint8_t quantity;
+    double drift, vol, horizon, first, second;
+    double value;
+    int32_t status;
+};
 
 /* A row as it lies in memory: columns are read and written in place, by strides. */
 struct row {
@@ -161,14 +169,81 @@ static void call_columns(struct row *rows, size_t count) {
     }
 }
 
+/* The answer of the function that has the quantity's name. */
+static int32_t ask(const struct law *law, double *value) {
+    const double first = law->first, second = law->second;
+    switch (law->quantity) {
+#define ONE(QUANTITY, function) \
+    case QUANTITY: return function(law->drift, law->vol, law->horizon, first, value)
+#define TWO(QUANTITY, function) \
+    case QUANTITY: return function(law->drift, law->vol, law->horizon, first, second, value)
+        ONE(FLOODMARK_QUANTITY_TERMINAL_PDF, floodmark_terminal_pdf);
+        ONE(FLOODMARK_QUANTITY_TERMINAL_CDF, floodmark_terminal_cdf);
+        ONE(FLOODMARK_QUANTITY_TERMINAL_QUANTILE, floodmark_terminal_quantile);
+        ONE(FLOODMARK_QUANTITY_MAX_PDF, floodmark_max_pdf);
+        ONE(FLOODMARK_QUANTITY_MAX_CDF, floodmark_max_cdf);
+        ONE(FLOODMARK_QUANTITY_MAX_TAIL, floodmark_max_tail);
+        ONE(FLOODMARK_QUANTITY_MAX_QUANTILE, floodmark_max_quantile);
+        ONE(FLOODMARK_QUANTITY_MIN_PDF, floodmark_min_pdf);
+        ONE(FLOODMARK_QUANTITY_MIN_CDF, floodmark_min_cdf);
+        ONE(FLOODMARK_QUANTITY_MIN_TAIL, floodmark_min_tail);
+        ONE(FLOODMARK_QUANTITY_MIN_QUANTILE, floodmark_min_quantile);
+        TWO(FLOODMARK_QUANTITY_JOINT_MAX_CDF, floodmark_joint_max_cdf);
+        TWO(FLOODMARK_QUANTITY_JOINT_MAX_PDF, floodmark_joint_max_pdf);
+        TWO(FLOODMARK_QUANTITY_JOINT_MIN_CDF, floodmark_joint_min_cdf);
+        TWO(FLOODMARK_QUANTITY_JOINT_MIN_PDF, floodmark_joint_min_pdf);
+        ONE(FLOODMARK_QUANTITY_SURVIVAL, floodmark_survival);
+        TWO(FLOODMARK_QUANTITY_FIRST_PASSAGE_PDF, floodmark_first_passage_pdf);
+        TWO(FLOODMARK_QUANTITY_FIRST_PASSAGE_CDF, floodmark_first_passage_cdf);
+        TWO(FLOODMARK_QUANTITY_FIRST_PASSAGE_QUANTILE, floodmark_first_passage_quantile);
+        TWO(FLOODMARK_QUANTITY_DISCOUNTED_FIRST_PASSAGE, floodmark_discounted_first_passage);
+        TWO(FLOODMARK_QUANTITY_BRIDGE_CROSSING, floodmark_bridge_crossing);
+        ONE(FLOODMARK_QUANTITY_SAMPLE_TERMINAL, floodmark_sample_terminal);
+        TWO(FLOODMARK_QUANTITY_SAMPLE_MAX, floodmark_sample_max);
+        TWO(FLOODMARK_QUANTITY_SAMPLE_MIN, floodmark_sample_min);
+        TWO(FLOODMARK_QUANTITY_DRIFT_WEIGHT, floodmark_drift_weight);
+    }
+    fail("a quantity without a function");
+    return -1;
+}
+
+static void print_laws(struct law *laws, size_t count) {
+    const ptrdiff_t step = (ptrdiff_t)(sizeof *laws / sizeof(double));
+    /* One call for each stretch of rows with the same quantity. */
+    for (size_t start = 0, end; start < count; start = end) {
+        for (end = start; end < count && laws[end].quantity == laws[start].quantity; end += 1) {
+        }
+        struct law *stretch = &laws[start];
+        FloodmarkLawColumns inputs = {
+            end - start,           {&stretch->drift, step}, {&stretch->vol, step},
+            {&stretch->horizon, step}, {&stretch->first, step}, {&stretch->second, step},
+        };
+        FloodmarkResults value = {&stretch->value, step};
+        FloodmarkStatuses status = {&stretch->status, (ptrdiff_t)(sizeof *laws / sizeof(int32_t))};
+        if (floodmark_law_columns(stretch->quantity, &inputs, value, status, NULL) != FLOODMARK_STATUS_OK) {
+            fail("a call over columns of the law was refused");
+        }
+        for (struct law *law = stretch; law < &laws[end]; law += 1) {
+            double alone;
+            fill(&alone, 1);
+            printf("scalar,%" PRId32, ask(law, &alone));
+            print_bits(&alone, 1);
+            printf("\ncolumn,%" PRId32, law->status);
+            print_bits(&law->value, 1);
+            printf("\n");
+        }
+    }
+}
+
 #define MOST_CELLS 64
 #define MOST_ROWS 10000
 
 int main(int count, char **words) {
     static struct row rows[MOST_ROWS];
+    static struct law laws[MOST_ROWS];
     static char head[4096], line[4096];
     char *names[MOST_CELLS], *cells[MOST_CELLS];
-    size_t row_count = 0;
+    size_t row_count = 0, law_count = 0;
     FILE *file = count == 2 ? fopen(words[1], "r") : NULL;
     if (file == NULL || fgets(head, sizeof head, file) == NULL) {
         fail("usage: vectors FILE");
@@ -176,8 +251,18 @@ int main(int count, char **words) {
     size_t columns = cut(head, names, MOST_CELLS);
 #define CELL(name) cells[place(names, columns, name)]
     while (fgets(line, sizeof line, file) != NULL) {
-        if (cut(line, cells, MOST_CELLS) != columns || row_count == MOST_ROWS) {
+        if (cut(line, cells, MOST_CELLS) != columns || row_count + law_count == MOST_ROWS) {
             fail("a row is too long or too short, or there are too many");
+        }
+        if (strcmp(CELL("kind"), "law") == 0) {
+            struct law *law = &laws[law_count++];
+            law->quantity = (uint8_t)atoi(CELL("code"));
+            law->drift = number(CELL("drift"));
+            law->vol = number(CELL("vol"));
+            law->horizon = number(CELL("horizon"));
+            law->first = number(CELL("first"));
+            law->second = number(CELL("second"));
+            continue;
         }
         if (strcmp(CELL("kind"), "contract") != 0) {
             fail(CELL("kind"));
@@ -204,5 +289,6 @@ int main(int count, char **words) {
         print_scalar(&rows[n]);
         print_column(&rows[n]);
     }
+    print_laws(laws, law_count);
     return 0;
 }

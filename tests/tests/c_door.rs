@@ -9,6 +9,8 @@ use std::process::Command;
 
 use c_library::{Link, compile};
 use floodmark::Status;
+use floodmark::batch::Quantity;
+use floodmark::brownian::Law;
 use floodmark::price::{Greeks, greeks};
 use floodmark::terms::{Contract, Direction, Knock, Market, Payoff, RebatePaid, TermSheet};
 use floodmark_tests::{run, scratch};
@@ -35,6 +37,9 @@ fn expected_claims() -> Vec<String> {
     for choice in [RebatePaid::Hit, RebatePaid::Expiry] {
         claims.push(format!("FLOODMARK_REBATE_PAID_{} {}", choice.to_string().to_uppercase(), choice.code()));
     }
+    for quantity in Quantity::ALL {
+        claims.push(format!("FLOODMARK_QUANTITY_{} {}", quantity.name().to_uppercase(), quantity.code()));
+    }
     for (part, number) in ["MAJOR", "MINOR", "PATCH"].into_iter().zip(floodmark::VERSION.split('.')) {
         claims.push(format!("FLOODMARK_VERSION_{part} {number}"));
     }
@@ -48,6 +53,13 @@ fn expected_claims() -> Vec<String> {
     structure(&mut claims, "FloodmarkProfileColumns", 0, column, &profile);
     let book = ["contract", "spot", "strike", "barrier", "rebate", "rebate_paid", "expiry", "vol", "rate", "dividend"];
     structure(&mut claims, "FloodmarkBook", size_of::<usize>(), column, &book);
+    structure(
+        &mut claims,
+        "FloodmarkLawColumns",
+        size_of::<usize>(),
+        column,
+        &["drift", "vol", "horizon", "first", "second"],
+    );
     for name in ["FloodmarkNumbers", "FloodmarkCodes", "FloodmarkResults", "FloodmarkStatuses"] {
         structure(&mut claims, name, 0, size_of::<usize>(), &["first", "stride"]);
     }
@@ -107,7 +119,7 @@ fn every_constant_of_the_header_is_asked_about() {
         .filter_map(|line| line.trim().strip_suffix(',')?.split_once(" = "))
         .map(|(constant, _)| constant)
         .collect();
-    assert!(constants.len() >= 44 + 25 + 3);
+    assert_eq!(constants.len(), usize::from(Contract::COUNT) + Status::ALL.len() + 3 + Quantity::ALL.len());
     for constant in constants {
         assert!(claims.iter().any(|claim| claim.starts_with(&format!("{constant} "))), "{constant}");
     }
@@ -181,6 +193,9 @@ fn a_pricer_in_cpp_quotes_and_manages_its_book() {
     assert_eq!(row("lock-upper")[4..8], numbers);
     assert_eq!(row("typing-error")[4..9], ["nan"; 5]);
     assert!(said.contains("vol must be from 0 to 1000, got -0.2\n"), "{said}");
+    let crossing =
+        Law::new(0.019 - 0.34 * 0.34 / 2.0, 0.34, 0.25).unwrap().bridge_crossing(0.05, (55.0_f64 / 41.5).ln());
+    assert!(said.contains(&format!("over the barrier between two dates {:.6}\n", crossing.unwrap())), "{said}");
     for id in ["lock-lower", "gauge-flood", "gauge-drought", "barge-hire"] {
         assert_eq!(row(id).last().unwrap(), "ok", "{said}");
     }

@@ -12,6 +12,7 @@ use std::process::Command;
 use std::sync::OnceLock;
 
 use floodmark::Status;
+use floodmark::batch::Quantity;
 use floodmark::terms::{Contract, RebatePaid};
 use floodmark_tests::{root, run};
 
@@ -47,6 +48,9 @@ fn the_library_exports_what_the_header_declares_and_nothing_else() {
     let declared = declared(committed());
     assert!(declared.contains("floodmark_price") && declared.contains("floodmark_version"));
     assert_eq!(exported, declared);
+    for quantity in Quantity::ALL {
+        assert!(declared.contains(format!("floodmark_{}", quantity.name()).as_str()), "{quantity:?}");
+    }
 }
 
 /// The functions that a header declares: the words before an opening parenthesis, comments and macros aside.
@@ -104,6 +108,16 @@ fn constants() -> String {
             ("expiry".to_owned(), RebatePaid::Expiry.code(), "at expiry".to_owned()),
         ]
         .map(|(name, code, meaning)| (name, i32::from(code), meaning)),
+    );
+    enumeration(
+        &mut text,
+        "Quantity",
+        "What floodmark_law_columns can be asked, each with the function that answers the same for one law.",
+        Quantity::ALL.map(|quantity| {
+            let arguments = quantity.arguments().join(", ");
+            let meaning = format!("floodmark_{}(drift, vol, horizon, {arguments}, value)", quantity.name());
+            (quantity.name().to_owned(), i32::from(quantity.code()), meaning)
+        }),
     );
     text
 }

@@ -24,12 +24,12 @@ use std::sync::OnceLock;
 
 use c_library::{Link, compile};
 use floodmark::Status;
-use floodmark::batch::{Book, Column, ColumnMut, GreekColumns, ProfileColumns};
+use floodmark::batch::{Book, Column, ColumnMut, GreekColumns, LawColumns, ProfileColumns, Quantity};
 use floodmark::price::{BarrierProfile, Greeks};
 use floodmark::terms::{Contract, Market, RebatePaid, TermSheet};
 use floodmark::{Result, batch, price};
 use floodmark_tests::{root, run};
-use parity_rows::{ContractRow, contract_rows};
+use parity_rows::{ContractRow, LawRow, contract_rows, law_rows};
 
 const COLUMNS: &str = "kind,name,code,spot,strike,barrier,rebate,rebate_paid,expiry,vol,rate,dividend,\
     drift,horizon,first,second,\
@@ -175,7 +175,50 @@ fn generate() -> String {
     for row in contract_rows() {
         writeln!(text, "contract,{},,,,,{}", row.cells(), scalar(&row).cells()).unwrap();
     }
+    for row in law_rows() {
+        writeln!(text, "law,{},{}{}", row.cells(), law_cells(law_scalar(&row)), ",".repeat(15)).unwrap();
+    }
     text
+}
+
+/// The status and the bits that the law gives for a row.
+fn law_scalar(row: &LawRow) -> (i32, u64) {
+    let found = batch::law_value(row.quantity, row.drift, row.vol, row.horizon, row.first, row.second);
+    (status(&found), found.unwrap_or(f64::NAN).to_bits())
+}
+
+fn law_cells((status, bits): (i32, u64)) -> String {
+    format!("{status},{bits:016x}")
+}
+
+#[test]
+fn columns_of_the_law_have_the_bits_of_its_scalars() {
+    let rows = law_rows();
+    for quantity in Quantity::ALL {
+        let rows: Vec<&LawRow> = rows.iter().filter(|row| row.quantity == quantity).collect();
+        let column = |member: fn(&LawRow) -> f64| rows.iter().map(|row| member(row)).collect::<Vec<f64>>();
+        let (drift, vol, horizon) = (column(|row| row.drift), column(|row| row.vol), column(|row| row.horizon));
+        let (first, second) = (column(|row| row.first), column(|row| row.second));
+        let inputs = LawColumns {
+            rows: rows.len(),
+            drift: Column::from_slice(&drift),
+            vol: Column::from_slice(&vol),
+            horizon: Column::from_slice(&horizon),
+            first: Column::from_slice(&first),
+            second: Column::from_slice(&second),
+        };
+        let (mut values, mut statuses) = (vec![0.0; rows.len()], vec![-1; rows.len()]);
+        batch::law(
+            quantity,
+            &inputs,
+            &mut ColumnMut::from_slice(&mut values),
+            &mut ColumnMut::from_slice(&mut statuses),
+        )
+        .unwrap();
+        for (place, row) in rows.iter().enumerate() {
+            assert_eq!((statuses[place], values[place].to_bits()), law_scalar(row), "{row:?}");
+        }
+    }
 }
 
 #[test]
@@ -213,7 +256,12 @@ fn every_contract_and_every_status_of_a_row_is_in_the_file() {
     for code in 0..Contract::COUNT {
         assert!(answered("contract", code) >= 6, "contract {code}: {}", answered("contract", code));
     }
-    for status in Status::ALL.into_iter().filter(|status| status.code() < 30) {
+    for quantity in Quantity::ALL {
+        assert!(answered("law", quantity.code()) >= 4, "{quantity:?}: {}", answered("law", quantity.code()));
+    }
+    // No row can ask an unknown quantity: a call over columns asks the same of every row.
+    let of_a_row = |status: &Status| status.code() < 100 && *status != Status::Quantity;
+    for status in Status::ALL.into_iter().filter(of_a_row) {
         assert!(rows.iter().any(|row| row[place("status")] == status.code().to_string()), "{status:?}");
     }
     assert!(rows.iter().all(|row| (row[place("status")] == "0") == (row[place("value")] != "7ff8000000000000")));

@@ -1,7 +1,9 @@
-//! The inputs of the parity vectors: every contract in everyday, broad and extreme markets, and bad rows among them.
+//! The inputs of the parity vectors: every contract and every quantity of the law, from everyday to extreme, and bad
+//! rows among them.
 //!
 //! Only additions, products and table look-ups make them, so that every machine makes the same.
 
+use floodmark::batch::Quantity;
 use floodmark::terms::{Contract, RebatePaid};
 
 /// One contract as plain numbers.
@@ -176,4 +178,114 @@ fn refused(good: &[ContractRow]) -> Vec<ContractRow> {
         rows.push(ContractRow { barrier: number, ..good[41] });
     }
     rows
+}
+
+/// One question to the law as plain numbers.
+#[derive(Clone, Copy, Debug)]
+pub(crate) struct LawRow {
+    pub(crate) quantity: Quantity,
+    pub(crate) drift: f64,
+    pub(crate) vol: f64,
+    pub(crate) horizon: f64,
+    pub(crate) first: f64,
+    pub(crate) second: f64,
+}
+
+impl LawRow {
+    /// The cells `name` … `second` of the file.
+    pub(crate) fn cells(&self) -> String {
+        let second = if self.quantity.arguments().len() < 2 { String::new() } else { format!("{:?}", self.second) };
+        format!(
+            "{},{},,,,,,,{:?},,,{:?},{:?},{:?},{second}",
+            self.quantity.name(),
+            self.quantity.code(),
+            self.vol,
+            self.drift,
+            self.horizon,
+            self.first
+        )
+    }
+}
+
+/// Ten rows of each quantity: four everyday, three extreme, three that are refused.
+pub(crate) fn law_rows() -> Vec<LawRow> {
+    let mut dice = Dice::new(0x1a3_f10d);
+    let mut rows = Vec::new();
+    for quantity in Quantity::ALL {
+        for place in 0..10 {
+            let mut row = if place < 4 { everyday_law(&mut dice) } else { extreme_law(&mut dice) };
+            let mut arguments = quantity.arguments().iter().map(|name| argument(name, place < 4, &mut dice));
+            row = LawRow {
+                quantity,
+                first: arguments.next().unwrap(),
+                second: arguments.next().unwrap_or(f64::NAN),
+                ..row
+            };
+            match place {
+                7 => spoil(&mut row, &mut dice),
+                8 => row.first = f64::NAN,
+                9 => spoil_last(&mut row),
+                _ => {}
+            }
+            rows.push(row);
+        }
+    }
+    rows
+}
+
+fn everyday_law(dice: &mut Dice) -> LawRow {
+    LawRow {
+        quantity: Quantity::ALL[0],
+        drift: dice.between(-0.5, 0.5),
+        vol: dice.between(0.05, 1.0),
+        horizon: dice.between(0.05, 4.0),
+        first: f64::NAN,
+        second: f64::NAN,
+    }
+}
+
+fn extreme_law(dice: &mut Dice) -> LawRow {
+    LawRow {
+        drift: dice.pick(&[-40.0, -1.0, -1e-9, 0.0, 1e-9, 1.0, 40.0]),
+        vol: dice.pick(&[1e-3, 0.05, 1.0, 30.0]),
+        horizon: dice.pick(&[1e-9, 1e-3, 1.0, 100.0, 1e4]),
+        ..everyday_law(dice)
+    }
+}
+
+/// A number that an argument of this name may be.
+fn argument(name: &str, everyday: bool, dice: &mut Dice) -> f64 {
+    match (name, everyday) {
+        ("probability" | "uniform", true) => dice.between(0.01, 0.99),
+        ("probability" | "uniform", false) => dice.pick(&[1e-300, 1e-17, 0.3, 0.5, 1.0 - 1e-16]),
+        ("time", true) => dice.between(0.01, 4.0),
+        ("time", false) => dice.pick(&[0.0, 1e-12, 0.5, 1e5]),
+        (_, true) => dice.between(-1.0, 1.0),
+        (_, false) => dice.pick(&[-100.0, -3.0, -1e-12, 0.0, 1e-12, 0.2, 3.0, 100.0]),
+    }
+}
+
+/// Puts a number of the law out of its domain.
+fn spoil(row: &mut LawRow, dice: &mut Dice) {
+    match row.quantity.code() % 3 {
+        0 => row.drift = dice.pick(&[f64::NAN, f64::INFINITY]),
+        1 => row.vol = dice.pick(&[f64::NAN, -0.2]),
+        _ => row.horizon = dice.pick(&[f64::NAN, -1.0, 0.0]),
+    }
+}
+
+/// Puts the last argument out of its domain.
+fn spoil_last(row: &mut LawRow) {
+    let arguments = row.quantity.arguments();
+    let bad = match arguments[arguments.len() - 1] {
+        "probability" => 1.5,
+        "uniform" => 0.0,
+        "time" => -1.0,
+        _ => f64::NAN,
+    };
+    if arguments.len() < 2 {
+        row.first = bad;
+    } else {
+        row.second = bad;
+    }
 }
