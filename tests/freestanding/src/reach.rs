@@ -5,7 +5,8 @@
 
 use core::ptr;
 
-use floodmark::batch::{Book, Column, ColumnMut, GreekColumns, ProfileColumns};
+use floodmark::batch::{Book, Column, ColumnMut, GreekColumns, LawColumns, ProfileColumns};
+use floodmark::brownian::{Law, Quantity};
 use floodmark::price::Greeks;
 use floodmark::terms::{Contract, Market, Payoff, RebatePaid, TermSheet};
 use floodmark::{Status, batch, price, special};
@@ -29,6 +30,8 @@ pub(crate) fn everything() {
     special_functions();
     one_contract();
     columns();
+    law();
+    law_columns();
     #[cfg(feature = "planted")]
     keep([1.0, 2.0, 3.0][any(1_usize)]);
 }
@@ -113,10 +116,69 @@ fn columns() {
     // SAFETY: the memory outlives the column, and nothing else touches it meanwhile.
     let mut status_column = unsafe { ColumnMut::from_raw(status.as_mut_ptr(), 1, ROWS) };
     keep(batch::price(&book, &mut ColumnMut::from_slice(&mut value), &mut status_column));
+    keep(batch::reference_price(&book, &mut ColumnMut::from_slice(&mut value), &mut status_column));
+    let [bounded, error_bound, ..] = more.each_mut().map(|column| ColumnMut::from_slice(column));
+    keep(batch::bounded_price(&book, &mut { bounded }, &mut { error_bound }, &mut status_column));
     let mut greeks = GreekColumns { columns: more.each_mut().map(|column| Some(ColumnMut::from_slice(column))) };
     keep(batch::greeks(&book, &mut greeks, &mut status_column));
+    keep(batch::reference_greeks(&book, &mut greeks, &mut status_column));
     let [touch_probability, distance, gap, ..] = more.each_mut().map(|column| Some(ColumnMut::from_slice(column)));
     let mut profile = ProfileColumns { touch_probability, distance, gap };
     keep(batch::barrier_profile(&book, &mut profile, &mut status_column));
     keep((value, more, status));
+}
+
+fn law() {
+    let Ok(law) = Law::new(any(0.05), any(0.2), any(1.5)) else { return };
+    let (terminal, level, time) = (any(0.1), any(0.3), any(0.7));
+    let (probability, uniform) = (any(0.4), any(0.6));
+    keep([Law::drift(&law), Law::vol(&law), Law::horizon(&law)]);
+    keep(Law::terminal_pdf(&law, terminal));
+    keep(Law::terminal_cdf(&law, terminal));
+    keep(Law::terminal_quantile(&law, probability));
+    keep(Law::max_pdf(&law, level));
+    keep(Law::max_cdf(&law, level));
+    keep(Law::max_tail(&law, level));
+    keep(Law::max_quantile(&law, probability));
+    keep(Law::min_pdf(&law, level));
+    keep(Law::min_cdf(&law, level));
+    keep(Law::min_tail(&law, level));
+    keep(Law::min_quantile(&law, probability));
+    keep(Law::joint_max_cdf(&law, terminal, level));
+    keep(Law::joint_max_pdf(&law, terminal, level));
+    keep(Law::joint_min_cdf(&law, terminal, level));
+    keep(Law::joint_min_pdf(&law, terminal, level));
+    keep(Law::survival(&law, level));
+    keep(Law::first_passage_pdf(&law, level, time));
+    keep(Law::first_passage_cdf(&law, level, time));
+    keep(Law::first_passage_quantile(&law, level, probability));
+    keep(Law::discounted_first_passage(&law, level, any(0.03)));
+    keep(Law::bridge_crossing(&law, terminal, level));
+    keep(Law::sample_terminal(&law, uniform));
+    keep(Law::sample_max(&law, terminal, uniform));
+    keep(Law::sample_min(&law, terminal, uniform));
+    keep(Law::sample_terminal_max(&law, uniform, probability));
+    keep(Law::drift_weight(&law, terminal, any(-0.1)));
+}
+
+fn law_columns() {
+    const ROWS: usize = 3;
+    let Ok(quantity) = Quantity::from_code(any(11)) else { return };
+    keep(Quantity::code(quantity));
+    keep(Quantity::name(quantity));
+    keep(Quantity::arguments(quantity));
+    let (drift, vol, horizon, first, second) = (any(0.05), any(0.2), any(1.5), any(0.1), any(0.3));
+    keep(batch::law_value(quantity, drift, vol, horizon, first, second));
+    if let Ok(law) = Law::new(drift, vol, horizon) {
+        keep(Quantity::value(quantity, &law, first, second));
+        keep(Quantity::reference(quantity, &law, first, second));
+    }
+    let numbers = any([0.5; ROWS]);
+    let column = Column::from_slice(&numbers);
+    let columns =
+        LawColumns { rows: any(ROWS), drift: column, vol: column, horizon: column, first: column, second: column };
+    let (mut value, mut status) = ([0.0; ROWS], [0; ROWS]);
+    let refused =
+        batch::law(quantity, &columns, &mut ColumnMut::from_slice(&mut value), &mut ColumnMut::from_slice(&mut status));
+    keep((refused, value, status));
 }

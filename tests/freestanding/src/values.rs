@@ -1,10 +1,13 @@
 //! Results that must have the same bits in this program and in any other: the test compiles this file too.
 
+use floodmark::batch::law_value;
+use floodmark::brownian::Quantity;
 use floodmark::price::greeks;
 use floodmark::special::{exp, expm1, ln, log1p, mills_ratio, normal_cdf, normal_log_tail, normal_quantile};
 use floodmark::terms::{Contract, Market, RebatePaid, TermSheet};
 
-/// Hands out the bits of the Greeks of every contract in two markets, and of the special functions on a grid.
+/// Hands out the bits of the Greeks of every contract in two markets, of every quantity of the law, and of the
+/// special functions on a grid.
 pub(crate) fn values(keep: &mut dyn FnMut(u64)) {
     let markets = [
         Market { spot: 100.0, vol: 0.25, rate: 0.08, dividend: 0.04 },
@@ -22,6 +25,14 @@ pub(crate) fn values(keep: &mut dyn FnMut(u64)) {
                     Ok(found) => found.to_array().into_iter().for_each(|number| keep(number.to_bits())),
                     Err(error) => keep(u64::from(error.status.code().unsigned_abs())),
                 }
+            }
+        }
+    }
+    for quantity in Quantity::ALL {
+        for (first, second) in [(0.1, 0.3), (0.25, 0.75), (0.9, 0.0), (-0.2, 0.5)] {
+            match law_value(quantity, 0.05, 0.2, 1.5, first, second) {
+                Ok(number) => keep(number.to_bits()),
+                Err(error) => keep(u64::from(error.status.code().unsigned_abs())),
             }
         }
     }
