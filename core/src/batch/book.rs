@@ -3,7 +3,7 @@
 
 use crate::batch::{Column, ColumnMut};
 use crate::error::{Result, Status};
-use crate::price::{self, BarrierProfile, Greeks};
+use crate::price::{self, BarrierProfile, BoundedPrice, Greeks};
 use crate::terms::{Contract, Market, RebatePaid, TermSheet};
 
 /// The columns of a book. Codes as in [`Contract::code`] and [`RebatePaid::from_code`].
@@ -125,11 +125,47 @@ pub struct ProfileColumns<'a> {
 ///
 /// [`Status::ColumnLength`] if a column has fewer rows than the book; then nothing is written.
 pub fn price(book: &Book<'_>, value: &mut ColumnMut<'_, f64>, status: &mut ColumnMut<'_, i32>) -> Result<usize> {
+    values(book, price::price, value, status)
+}
+
+/// Values a book and bounds the error of each value: [`price::bounded_price`] row by row.
+///
+/// Rows are refused as in [`price`](fn@price); a refused row has NaN in both columns.
+///
+/// # Errors
+///
+/// As [`price`](fn@price).
+pub fn bounded_price(
+    book: &Book<'_>,
+    value: &mut ColumnMut<'_, f64>,
+    error_bound: &mut ColumnMut<'_, f64>,
+    status: &mut ColumnMut<'_, i32>,
+) -> Result<usize> {
     value.covers(book.rows)?;
-    book.each(status, price::price, |row, outcome| {
-        // SAFETY: `value` covers the rows.
-        unsafe { value.write(row, outcome.unwrap_or(f64::NAN)) };
+    error_bound.covers(book.rows)?;
+    book.each(status, price::bounded_price, |row, outcome| {
+        let found = outcome.unwrap_or(BoundedPrice { value: f64::NAN, error_bound: f64::NAN });
+        // SAFETY: `value` and `error_bound` cover the rows.
+        unsafe {
+            value.write(row, found.value);
+            error_bound.write(row, found.error_bound);
+        }
     })
+}
+
+/// Values a book by the reference path: [`price::reference_price`] row by row.
+///
+/// Rows are refused as in [`price`](fn@price).
+///
+/// # Errors
+///
+/// As [`price`](fn@price).
+pub fn reference_price(
+    book: &Book<'_>,
+    value: &mut ColumnMut<'_, f64>,
+    status: &mut ColumnMut<'_, i32>,
+) -> Result<usize> {
+    values(book, price::reference_price, value, status)
 }
 
 /// Values a book with its Greeks: [`price::greeks`] row by row, into the columns that are wanted.
@@ -140,10 +176,50 @@ pub fn price(book: &Book<'_>, value: &mut ColumnMut<'_, f64>, status: &mut Colum
 ///
 /// As [`price`](fn@price).
 pub fn greeks(book: &Book<'_>, greeks: &mut GreekColumns<'_>, status: &mut ColumnMut<'_, i32>) -> Result<usize> {
+    sensitivities(book, price::greeks, greeks, status)
+}
+
+/// Values a book with its Greeks by the reference path: [`price::reference_greeks`] row by row, into the columns
+/// that are wanted.
+///
+/// Rows are refused as in [`price`](fn@price).
+///
+/// # Errors
+///
+/// As [`price`](fn@price).
+pub fn reference_greeks(
+    book: &Book<'_>,
+    greeks: &mut GreekColumns<'_>,
+    status: &mut ColumnMut<'_, i32>,
+) -> Result<usize> {
+    sensitivities(book, price::reference_greeks, greeks, status)
+}
+
+/// One number a row.
+fn values(
+    book: &Book<'_>,
+    of: impl Fn(&TermSheet, &Market) -> Result<f64>,
+    value: &mut ColumnMut<'_, f64>,
+    status: &mut ColumnMut<'_, i32>,
+) -> Result<usize> {
+    value.covers(book.rows)?;
+    book.each(status, of, |row, outcome| {
+        // SAFETY: `value` covers the rows.
+        unsafe { value.write(row, outcome.unwrap_or(f64::NAN)) };
+    })
+}
+
+/// Greeks, into the columns that are wanted.
+fn sensitivities(
+    book: &Book<'_>,
+    of: impl Fn(&TermSheet, &Market) -> Result<Greeks>,
+    greeks: &mut GreekColumns<'_>,
+    status: &mut ColumnMut<'_, i32>,
+) -> Result<usize> {
     for column in greeks.columns.iter().flatten() {
         column.covers(book.rows)?;
     }
-    book.each(status, price::greeks, |row, outcome| {
+    book.each(status, of, |row, outcome| {
         let numbers = outcome.map_or([f64::NAN; 12], Greeks::to_array);
         for (column, number) in greeks.columns.iter_mut().zip(numbers) {
             if let Some(column) = column {

@@ -5,6 +5,9 @@ mod column;
 mod law;
 
 pub use crate::brownian::Quantity;
-pub use book::{Book, GreekColumns, ProfileColumns, barrier_profile, greeks, price};
+pub use book::{
+    Book, GreekColumns, ProfileColumns, barrier_profile, bounded_price, greeks, price, reference_greeks,
+    reference_price,
+};
 pub use column::{Column, ColumnMut};
 pub use law::{LawColumns, law, law_value};
