@@ -4,6 +4,7 @@
 mod common;
 
 use common::{Distribution, Row, contract_row, line, number, table};
+use floodmark::brownian::Law;
 use floodmark::price::price;
 
 const BUDGET: f64 = 1e-12;
@@ -22,6 +23,15 @@ fn within_budget(name: &str, value: impl Fn(&Row) -> f64) {
     }
     println!("{name}: {errors}");
     assert!(failures.is_empty(), "{} rows beyond {BUDGET:e}:\n{}", failures.len(), failures.join("\n"));
+}
+
+#[test]
+fn discounted_first_passage_is_right_to_twelve_digits() {
+    within_budget("passage", |row| {
+        Law::new(number(row, "drift"), number(row, "vol"), number(row, "horizon"))
+            .and_then(|law| law.discounted_first_passage(number(row, "level"), number(row, "discount_rate")))
+            .unwrap_or_else(|error| panic!("{row:?}: {error}"))
+    });
 }
 
 #[test]
