@@ -148,10 +148,17 @@ impl Contract {
 
     /// The contract with this text, as in a book: `put`, `up-and-out cash call`, `down one-touch`, …
     pub fn parse(text: &str) -> Option<Contract> {
-        (0..Contract::COUNT).filter_map(|code| Contract::from_code(code).ok()).find(|contract| {
+        // Codes of one way to watch the barrier stand together, save for the touches: most are passed by in eights.
+        let promising = |first: &u8| {
+            *first == Contract::OneTouch(Direction::Up).code()
+                || Contract::from_code(*first).is_ok_and(|contract| text.starts_with(contract.words().0))
+        };
+        let same = |contract: &Contract| {
             let (watch, payoff) = contract.words();
             text.strip_prefix(watch) == Some(payoff)
-        })
+        };
+        let eights = (0..Contract::COUNT).step_by(8).filter(promising);
+        eights.flat_map(|first| first..first + 8).filter_map(|code| Contract::from_code(code).ok()).find(same)
     }
 
     /// Which side the barrier lies on, if there is one.
