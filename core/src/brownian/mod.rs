@@ -1,8 +1,8 @@
 //! The law of Brownian motion with drift and of its extremes.
 //!
-//! [`Law`] answers questions, each of which is also a [`Quantity`] for columns. Inside, [`walk`] holds the motion
-//! in either precision; [`maximum`], [`passage`], [`bridge`] and [`inverse`] its laws; [`strip`], [`bell`] and
-//! [`discounted`] are what the prices share with them.
+//! [`Law`] answers questions, each of which is also a [`Quantity`] for columns. Inside, `walk` holds the motion
+//! in either precision; `maximum`, `passage`, `bridge` and `inverse` its laws; `strip`, `bell` and
+//! `discounted` are what the prices share with them.
 
 mod bell;
 mod bridge;

@@ -1,8 +1,8 @@
 //! Values and Greeks of single contracts, watched continuously.
 //!
-//! A contract is a short sum of legs ([`legs`]); a leg is a payoff under an event ([`event`]) or cash at the hit
-//! ([`hit`]); a payoff under an event is one or two straight lines paid in strips ([`strip`]), plain or mirrored
-//! at the barrier ([`sensitivity`]).
+//! A contract is a short sum of legs (`legs`); a leg is a payoff under an event (`event`) or cash at the hit
+//! (`hit`); a payoff under an event is one or two straight lines paid in strips (`strip`), plain or mirrored
+//! at the barrier (`sensitivity`).
 
 mod bound;
 mod event;

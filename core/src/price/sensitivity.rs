@@ -96,6 +96,26 @@ impl<R: Functions> Sensitivity<R> {
         }
     }
 
+    /// Every number rounded to binary64.
+    pub(crate) fn nearest(self) -> Sensitivity<f64> {
+        Sensitivity {
+            value: self.value.nearest(),
+            slope: self.slope.nearest(),
+            bend: self.bend.nearest(),
+            vol: self.vol.nearest(),
+            vol_vol: self.vol_vol.nearest(),
+            vol_vol_terms: self.vol_vol_terms.nearest(),
+            slope_vol: self.slope_vol.nearest(),
+            time: self.time.nearest(),
+            slope_time: self.slope_time.nearest(),
+            rate: self.rate.nearest(),
+            dividend: self.dividend.nearest(),
+            log_barrier: self.log_barrier.nearest(),
+            strike: self.strike.nearest(),
+            delicate: self.delicate,
+        }
+    }
+
     /// The sum with another, or the difference.
     fn combined(self, other: Sensitivity<R>, with: impl Fn(R, R) -> R) -> Sensitivity<R> {
         Sensitivity {
@@ -132,19 +152,19 @@ impl<R: Functions> Sensitivity<R> {
 
     /// In the trade's units.
     pub(crate) fn greeks(self, spot: f64, barrier: f64) -> Greeks {
-        let [spot, barrier] = [spot, barrier].map(R::of);
-        let per_barrier = if self.log_barrier == R::of(0.0) { self.log_barrier } else { self.log_barrier / barrier };
+        let [spot, barrier, zero] = [spot, barrier, 0.0].map(R::of);
+        let per_barrier = if self.log_barrier == zero { self.log_barrier } else { self.log_barrier / barrier };
         Greeks {
             value: self.value.nearest(),
             delta: (self.slope / spot).nearest(),
             gamma: (self.bend / spot / spot).nearest(),
             vega: self.vol.nearest(),
-            theta: (-self.time).nearest(),
+            theta: (zero - self.time).nearest(),
             rho: self.rate.nearest(),
             dividend_rho: self.dividend.nearest(),
             vanna: (self.slope_vol / spot).nearest(),
             volga: self.vol_vol.nearest(),
-            charm: (-self.slope_time / spot).nearest(),
+            charm: ((zero - self.slope_time) / spot).nearest(),
             barrier_delta: per_barrier.nearest(),
             strike_delta: self.strike.nearest(),
         }

@@ -1,10 +1,12 @@
 //! The value of a contract, and its Greeks.
 
 use crate::error::{Error, Result, Status};
+use crate::num::DoubleDouble;
 use crate::price::event::Levels;
 use crate::price::legs::Leg;
+use crate::price::sensitivity::Sensitivity;
 use crate::price::setting::Setting;
-use crate::price::{Greeks, reference_greeks, reference_price};
+use crate::price::{Greeks, reference_price};
 use crate::special::{Functions, ln_ratio};
 use crate::terms::{Direction, Market, TermSheet};
 
@@ -66,16 +68,20 @@ pub fn price(sheet: &TermSheet, market: &Market) -> Result<f64> {
 /// As [`price`].
 pub fn greeks(sheet: &TermSheet, market: &Market) -> Result<Greeks> {
     let (legs, setting, levels) = parts::<f64>(sheet, market)?;
-    let sum = legs[0].sensitivity(&setting, &levels) + legs[1].sensitivity(&setting, &levels);
-    let value = settled(sheet, market, &setting, sum.value)?;
-    let greeks = if sum.cancelled() {
-        // The terms of the derivatives cancel where those of the value do; there are digits enough to lose in
-        // double-double.
-        reference_greeks(sheet, market)?
-    } else {
-        sum.greeks(market.spot, sheet.barrier)
-    };
+    let sums = legs.map(|leg| leg.sensitivity(&setting, &levels));
+    let value = settled(sheet, market, &setting, sums[0].value + sums[1].value)?;
+    let mut sum = Sensitivity::none();
+    for (leg, fast) in legs.into_iter().zip(sums) {
+        // Where the terms of the derivatives cancel, there are digits enough to lose in double-double.
+        sum = sum + if fast.cancelled() { exact(leg, sheet, market, &levels) } else { fast };
+    }
+    let greeks = sum.greeks(market.spot, sheet.barrier);
     Ok(Greeks { value, ..greeks })
+}
+
+/// Value and derivatives of a leg in double-double, rounded.
+fn exact(leg: Leg, sheet: &TermSheet, market: &Market, levels: &Levels) -> Sensitivity<f64> {
+    leg.sensitivity(&Setting::<DoubleDouble>::new(market, sheet.expiry), levels).nearest()
 }
 
 /// The value itself, or the reference path's where the fast path has none that is good enough.
