@@ -7,11 +7,11 @@
 use crate::brownian::Form;
 use crate::error::Result;
 use crate::price::event::{Event, Levels};
-use crate::price::hit;
 use crate::price::legs::Pays;
 use crate::price::setting::Setting;
 use crate::price::strip::{End, Strip};
 use crate::price::valuation::{parts, price};
+use crate::price::{hit, positive};
 use crate::special::{ln_ratio, mills_ratio};
 use crate::terms::{Market, Payoff, TermSheet};
 
@@ -96,7 +96,7 @@ fn claim(setting: &Setting<f64>, levels: &Levels, payoff: Payoff, event: Event) 
         strip.as_ref().map_or(0.0, |strip| {
             let closed = strip.closed(setting);
             if event != Event::Untouched && closed.cancelled() {
-                law.integral(setting, strip, strip.value(setting), false)
+                law.integral(setting, strip, positive::worth(setting, strip), false)
             } else {
                 law.closed(setting, strip) + closed.terms
             }

@@ -166,7 +166,7 @@ impl<R: Functions> Claim<R> {
             }
             return Worth { value: sum.value, integrated: false };
         }
-        let strip = |strip: &Option<Strip<R>>| strip.as_ref().map_or(zero, |strip| strip.value(setting));
+        let strip = |strip: &Option<Strip<R>>| strip.as_ref().map_or(zero, |strip| positive::worth(setting, strip));
         // Without volatility a strike at the forward leaves the rounding of a difference.
         Worth { value: (strip(&self.plain) + strip(&self.image)).larger(zero), integrated: false }
     }

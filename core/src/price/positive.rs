@@ -16,7 +16,13 @@ use crate::price::setting::Setting;
 use crate::price::strip::{End, Level, Strip};
 use crate::special::Functions;
 
-/// Value of a strip, and, if `barrier` is given, of its part on paths that never touch it: then the strip lies on
+/// Value of a strip, by whichever form keeps its digits.
+pub(crate) fn worth<R: Functions>(setting: &Setting<R>, strip: &Strip<R>) -> R {
+    let sum = strip.closed(setting);
+    if !setting.still && sum.cancelled() { value(setting, strip, None) } else { sum.value }
+}
+
+/// Value of a strip by its integral, and, if `barrier` is given, of its part on paths that never touch it: then the strip lies on
 /// the spot's side of the barrier.
 pub(crate) fn value<R: Functions>(setting: &Setting<R>, strip: &Strip<R>, barrier: Option<f64>) -> R {
     let deviation = setting.deviation;

@@ -8,7 +8,6 @@
 //! ([`crate::price::positive`]).
 
 use crate::brownian::{Edge, density};
-use crate::price::positive;
 use crate::price::sensitivity::Sensitivity;
 use crate::price::setting::Setting;
 use crate::special::Functions;
@@ -164,12 +163,6 @@ impl<R: Functions> Strip<R> {
     pub(crate) fn closed(&self, setting: &Setting<R>) -> Sum<R> {
         let [share, cash] = self.legs(setting);
         Sum { value: share.value - cash.value, terms: share.terms + cash.terms }
-    }
-
-    /// The value, by whichever form keeps its digits.
-    pub(crate) fn value(&self, setting: &Setting<R>) -> R {
-        let sum = self.closed(setting);
-        if !setting.still && sum.cancelled() { positive::value(setting, self, None) } else { sum.value }
     }
 
     /// The derivatives, with the value by the closed form.
