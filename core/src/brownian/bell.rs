@@ -6,6 +6,10 @@ use crate::special::Functions;
 /// The widest panel of the integral, in standard deviations.
 const WIDEST_PANEL: f64 = 1.0;
 
+/// A peak that lies within the strip, but no further than this from an end, is told from that end all the same:
+/// the ends' own distances from the peak would not tell a narrow strip's width.
+const BESIDE: f64 = -1.0;
+
 /// The Gaussian at one end of a strip.
 #[derive(Clone, Copy, Debug)]
 pub(crate) struct Shoulder<R> {
@@ -40,14 +44,14 @@ impl<R: Functions> Bell<R> {
         };
         let length = far.map(|(_, length)| length);
         let slope = start.from_peak;
-        if slope >= zero {
+        if slope >= R::of(BESIDE) {
             let to = within(reach::<R>(slope.nearest()), length);
             let to_far = length.unwrap_or(zero);
             return Bell { height: start.height, slope, origin: zero, to_far, step: 1.0, from: zero, to };
         }
         if let Some((far, length)) = far {
             let slope = -far.from_peak;
-            if slope >= zero {
+            if slope >= R::of(BESIDE) {
                 let to = within(reach::<R>(slope.nearest()), Some(length));
                 return Bell { height: far.height, slope, origin: length, to_far: zero, step: -1.0, from: zero, to };
             }
@@ -70,7 +74,7 @@ impl<R: Functions> Bell<R> {
     /// survival if there is one. `growth` is the rate at which the factor changes.
     pub(crate) fn integral(&self, survival: Option<Survival<R>>, growth: f64, factor: impl Fn(R) -> R) -> R {
         let rate = survival.map_or(0.0, |survival| survival.rate.nearest());
-        let finest = 4.0 / (1.0 + self.slope.nearest() + rate + growth);
+        let finest = 4.0 / (1.0 + self.slope.magnitude().nearest() + rate + growth);
         let mut sum = R::of(0.0);
         integrate(self.from, self.to, finest, WIDEST_PANEL, |u, weight| {
             let gaussian = (-(self.slope * u) - u.square().times(0.5)).exp();

@@ -19,5 +19,5 @@ pub(crate) use bell::{Bell, Shoulder, Survival};
 pub(crate) use discounted::{DiscountedPassage, Form};
 pub use law::Law;
 pub use quantity::Quantity;
-pub(crate) use strip::{Edge, density};
+pub(crate) use strip::{Edge, Sides, density};
 pub(crate) use walk::Walk;

@@ -169,8 +169,8 @@ impl Law {
         }
         for end in [&strip.lower, &strip.upper].into_iter().flatten() {
             let errors = self.end(setting, end);
-            let shares = line.shares.abs() * end.share.above.min(end.share.below);
-            let cash = line.cash.abs() * end.cash.above.min(end.cash.below);
+            let shares = line.shares.abs() * end.share.tail;
+            let cash = line.cash.abs() * end.cash.tail;
             let tails = shares + cash;
             let jump = (line.shares * end.at - line.cash).abs();
             error += (errors.density + TAIL) * tails;
@@ -182,14 +182,17 @@ impl Law {
             };
         }
         // The weight takes part where a larger side does.
-        let bulk = |score: fn(&End<f64>) -> f64, weight: fn(&End<f64>) -> f64| match (&strip.lower, &strip.upper) {
-            (Some(lower), None) if score(lower) > 0.0 => weight(lower),
-            (None, Some(upper)) if score(upper) <= 0.0 => weight(upper),
-            (Some(lower), Some(upper)) if score(lower) > 0.0 && score(upper) < 0.0 => weight(lower),
+        let bulk = |score: fn(&End<f64>) -> f64, weight: fn(&End<f64>, &Setting<f64>) -> f64| match (
+            &strip.lower,
+            &strip.upper,
+        ) {
+            (Some(lower), None) if score(lower) > 0.0 => weight(lower, setting),
+            (None, Some(upper)) if score(upper) <= 0.0 => weight(upper, setting),
+            (Some(lower), Some(upper)) if score(lower) > 0.0 && score(upper) < 0.0 => weight(lower, setting),
             _ => 0.0,
         };
-        error += self.weight * line.shares.abs() * bulk(|end| end.d1, |end| end.share_weight);
-        error += self.weight * line.cash.abs() * bulk(|end| end.d2, |end| end.cash_weight);
+        error += self.weight * line.shares.abs() * bulk(|end| end.d1, End::share_weight);
+        error += self.weight * line.cash.abs() * bulk(|end| end.d2, End::cash_weight);
         error
     }
 
@@ -211,7 +214,8 @@ impl Law {
             for (end, side, error) in errors() {
                 // A shift of the Gaussian moves the shares' worth, and what is paid at the ends.
                 let jump = (strip.line.shares * end.at - strip.line.cash).abs();
-                let share = if side > 0.0 { end.share.above } else { end.share.below };
+                let weight = || end.share_weight(setting);
+                let share = if side > 0.0 { end.share.above(weight) } else { end.share.below(weight) };
                 let moved = error.score * (jump * end.density + setting.deviation * shares * share);
                 if !survives {
                     absolute += moved;

@@ -13,7 +13,7 @@
 use crate::price::positive;
 use crate::price::sensitivity::Sensitivity;
 use crate::price::setting::Setting;
-use crate::price::strip::{End, Level, Line, Strip, Sum};
+use crate::price::strip::{End, Ends, Level, Line, Place, Strip, Sum};
 use crate::special::Functions;
 use crate::terms::{Direction, Payoff};
 
@@ -31,9 +31,6 @@ enum Side {
     Below,
     Above,
 }
-
-/// A strip by what its ends are.
-type Ends = (Option<Level>, Option<Level>);
 
 /// The line that a payoff is, where it pays.
 fn line(payoff: Payoff, strike: f64) -> Line {
@@ -88,45 +85,68 @@ impl Levels {
         }
     }
 
-    const fn at(&self, level: Level) -> f64 {
-        match level {
-            Level::Strike => self.strike,
-            Level::Barrier => self.barrier,
+    /// Strike and barrier as places, each logarithm taken once; a payoff without a strike has none to take.
+    fn places<R: Functions>(&self, setting: &Setting<R>, payoff: Payoff, event: Event) -> Places<R> {
+        let zero = R::of(0.0);
+        let barred = event != Event::Always;
+        let way = |needed: bool, from: f64, to: f64| if needed { R::ln_ratio(from, to) } else { zero };
+        Places {
+            strike: Place {
+                level: Level::Strike,
+                at: self.strike,
+                from_spot: way(payoff.has_strike(), setting.spot, self.strike),
+                from_barrier: way(payoff.has_strike() && barred, self.barrier, self.strike),
+            },
+            barrier: Place {
+                level: Level::Barrier,
+                at: self.barrier,
+                from_spot: way(barred, setting.spot, self.barrier),
+                from_barrier: zero,
+            },
         }
     }
 
-    /// The payoff in the law of the spot.
-    fn plain<R: Functions>(&self, setting: &Setting<R>, payoff: Payoff, ends: Ends) -> Strip<R> {
+    /// The strips that a payoff under an event is made of.
+    pub(crate) fn claim<R: Functions>(&self, setting: &Setting<R>, payoff: Payoff, event: Event) -> Claim<R> {
+        let places = self.places(setting, payoff, event);
         // A forward on the strike is half in the money, the limit of small volatility; on the barrier it touches.
         let tie = |level: Level| match (level, self.direction) {
             (Level::Strike, _) => 0.5,
             (Level::Barrier, Direction::Up) => 1.0,
             (Level::Barrier, Direction::Down) => 0.0,
         };
-        let end = |level: Level| End::plain(setting, level, self.at(level), tie(level));
-        Strip { line: line(payoff, self.strike), lower: ends.0.map(end), upper: ends.1.map(end) }
-    }
-
-    /// The payoff in the image law; none without volatility, as the spot then never returns from the barrier.
-    fn image<R: Functions>(&self, setting: &Setting<R>, payoff: Payoff) -> Option<Strip<R>> {
-        let ends = if setting.still { None } else { self.cut(payoff, self.live()) }?;
-        let end = |level: Level| End::image(setting, self.barrier, level, self.at(level));
-        Some(Strip { line: line(payoff, self.strike), lower: ends.0.map(end), upper: ends.1.map(end) })
-    }
-
-    /// The payoff in the law of the spot, on one side of the barrier.
-    fn plain_side<R: Functions>(&self, setting: &Setting<R>, payoff: Payoff, side: Side) -> Option<Strip<R>> {
-        self.cut(payoff, side).map(|ends| self.plain(setting, payoff, ends))
-    }
-
-    /// The strips that a payoff under an event is made of.
-    pub(crate) fn claim<R: Functions>(&self, setting: &Setting<R>, payoff: Payoff, event: Event) -> Claim<R> {
-        let (plain, image) = match event {
-            Event::Always => (Some(self.plain(setting, payoff, everywhere(payoff))), None),
-            Event::Touched => (self.plain_side(setting, payoff, self.beyond()), self.image(setting, payoff)),
-            Event::Untouched => (self.plain_side(setting, payoff, self.live()), self.image(setting, payoff)),
+        let plain = |level: Level| End::plain(setting, places.at(level), tie(level));
+        let image = |level: Level| End::image(setting, places.at(level), -places.barrier.from_spot);
+        let line = line(payoff, self.strike);
+        let live = self.cut(payoff, self.live());
+        let ends = match event {
+            Event::Always => Some(everywhere(payoff)),
+            Event::Touched => self.cut(payoff, self.beyond()),
+            Event::Untouched => live,
         };
-        Claim { barrier: self.barrier, event, plain, image }
+        // Without volatility the spot never returns from the barrier, and there is no image.
+        let mirrored = if setting.still || event == Event::Always { None } else { live };
+        Claim {
+            barrier: self.barrier,
+            event,
+            plain: ends.map(|ends| Strip::cut(line, ends, plain)),
+            image: mirrored.map(|ends| Strip::cut(line, ends, image)),
+        }
+    }
+}
+
+/// Where the ends of strips can lie.
+struct Places<R> {
+    strike: Place<R>,
+    barrier: Place<R>,
+}
+
+impl<R: Functions> Places<R> {
+    fn at(&self, level: Level) -> Place<R> {
+        match level {
+            Level::Strike => self.strike,
+            Level::Barrier => self.barrier,
+        }
     }
 }
 
@@ -177,10 +197,23 @@ impl<R: Functions> Claim<R> {
         let image =
             self.image.as_ref().map_or_else(Sensitivity::none, |image| of(image).reflected(setting, self.barrier));
         let sum = if self.event == Event::Untouched { plain - image } else { plain + image };
-        let worth = self.worth(setting);
         // The density at the strike can vanish by itself, with the value of a digital far from vanishing.
-        let strike = Sum { value: sum.strike.magnitude(), terms: plain.strike.magnitude() + image.strike.magnitude() };
-        let delicate = sum.delicate || worth.integrated || strike.cancelled();
-        Sensitivity { value: worth.value, delicate, ..sum }
+        let strike = Sum { value: sum.strike, terms: plain.strike.magnitude() + image.strike.magnitude() };
+        let delicate = sum.delicate || self.delicate(setting) || strike.delicate();
+        Sensitivity { value: self.worth(setting).value, delicate, ..sum }
+    }
+
+    /// Whether the derivatives lose digits that the strips' own do not: where a plain strip and its image cancel, or
+    /// where the value that an image's power multiplies is itself what is left of a difference.
+    fn delicate(&self, setting: &Setting<R>) -> bool {
+        let Some(image) = &self.image else { return false };
+        let mirrored = image.closed(setting);
+        match (self.event, &self.plain) {
+            (Event::Untouched, Some(live)) => {
+                let (plain, mirrored) = (live.closed(setting).value, mirrored.value);
+                Sum { value: plain - mirrored, terms: plain.magnitude() + mirrored.magnitude() }.delicate()
+            }
+            _ => mirrored.delicate(),
+        }
     }
 }

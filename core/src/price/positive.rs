@@ -41,7 +41,8 @@ pub(crate) fn value<R: Functions>(setting: &Setting<R>, strip: &Strip<R>, barrie
         let per_share = if payoff.by_share { R::of(end.at) / R::of(start.at) } else { R::of(1.0) };
         Shoulder { from_peak: if upwards { -score } else { score }, height: end.density * per_share }
     };
-    let weight = if payoff.by_share { start.share_weight / R::of(start.at) } else { start.cash_weight };
+    let weight =
+        if payoff.by_share { start.share_weight(setting) / R::of(start.at) } else { start.cash_weight(setting) };
     let way = |from: f64, to: f64| R::ln_ratio(to, from).magnitude() / deviation;
     let far = far.map(|far| (shoulder(far), way(start.at, far.at)));
     let survival = barrier.map(|barrier| Survival {

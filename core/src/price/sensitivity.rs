@@ -146,7 +146,7 @@ impl<R: Functions> Sensitivity<R> {
     /// forward nears the barrier under a small volatility) volga's.
     pub(crate) fn cancelled(&self) -> bool {
         /// Volga passes through 0 on its way; only a deep loss shows that its terms cancel for another reason.
-        const DEEP: f64 = 1.0 / 256.0;
+        const DEEP: f64 = 1.0 / 128.0;
         self.delicate || self.vol_vol.magnitude() < self.vol_vol_terms.times(DEEP)
     }
 

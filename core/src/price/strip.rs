@@ -28,6 +28,17 @@ pub(crate) enum Level {
     Barrier,
 }
 
+/// Where an end lies.
+#[derive(Clone, Copy, Debug)]
+pub(crate) struct Place<R> {
+    pub(crate) level: Level,
+    pub(crate) at: f64,
+    /// `ln(spot / at)`
+    pub(crate) from_spot: R,
+    /// `ln(barrier / at)`
+    pub(crate) from_barrier: R,
+}
+
 /// One end of a strip: the worth of cash and of a share above and below it, and the density there.
 #[derive(Clone, Copy, Debug)]
 pub(crate) struct End<R> {
@@ -37,59 +48,50 @@ pub(crate) struct End<R> {
     pub(crate) share: Edge<R>,
     /// `e^(-rT) phi(d2)`; the share's is `at` times this.
     pub(crate) density: R,
-    /// Worth of cash and of a share wherever the spot ends.
-    pub(crate) cash_weight: R,
-    pub(crate) share_weight: R,
     pub(crate) d1: R,
     pub(crate) d2: R,
+    /// In the image law, the exponents of the weights of cash and of a share.
+    mirrored: Option<[R; 2]>,
 }
 
 impl<R: Functions> End<R> {
     /// In the law of the spot at expiry; `tie` is the part of a mass lying exactly on the end that counts as above.
-    pub(crate) fn plain(setting: &Setting<R>, level: Level, at: f64, tie: f64) -> End<R> {
-        let distance = R::ln_ratio(setting.spot, at) + setting.carry * setting.expiry;
+    pub(crate) fn plain(setting: &Setting<R>, place: Place<R>, tie: f64) -> End<R> {
+        let distance = place.from_spot + setting.carry * setting.expiry;
         if setting.still {
-            return End::still(setting, level, at, distance, tie);
+            return End::still(setting, place, distance, tie);
         }
         let d2 = distance / setting.deviation - setting.deviation.times(0.5);
         let density = density(d2.square().times(-0.5) - setting.rate * setting.expiry);
-        End::new(setting, level, at, d2, density, [setting.bond, setting.share])
+        End::new(setting, place, d2, density, None)
     }
 
     /// In the image of that law which the barrier casts: the law from `barrier^2 / spot`, weighted by
-    /// `(barrier / spot)^(2 carry / vol^2 - 1)`. `at` lies on the spot's side of the barrier or on it.
-    pub(crate) fn image(setting: &Setting<R>, barrier: f64, level: Level, at: f64) -> End<R> {
-        let Setting { spot, rate, dividend, expiry, carry, variance, deviation, .. } = *setting;
-        let to_barrier = R::ln_ratio(barrier, spot);
-        let beyond = R::ln_ratio(barrier, at);
-        let plain = (R::ln_ratio(spot, at) + carry * expiry) / deviation - deviation.times(0.5);
-        let d2 = (to_barrier + beyond + carry * expiry) / deviation - deviation.times(0.5);
-        let reflection = (to_barrier / deviation) * (beyond / deviation);
+    /// `(barrier / spot)^(2 carry / vol^2 - 1)`. The place is on the spot's side of the barrier or on it, and the
+    /// barrier `to_barrier` from the spot.
+    pub(crate) fn image(setting: &Setting<R>, place: Place<R>, to_barrier: R) -> End<R> {
+        let Setting { rate, dividend, expiry, carry, variance, deviation, .. } = *setting;
+        let half = deviation.times(0.5);
+        let plain = (place.from_spot + carry * expiry) / deviation - half;
+        let d2 = (to_barrier + place.from_barrier + carry * expiry) / deviation - half;
+        let reflection = (to_barrier / deviation) * (place.from_barrier / deviation);
         let density = density(plain.square().times(-0.5) - rate * expiry - reflection.times(2.0));
         let power = carry.times(2.0) / variance;
         let one = R::of(1.0);
-        let bond = (to_barrier * (power - one) - rate * expiry).exp();
-        let share = (to_barrier * (power + one) - dividend * expiry).exp().times(spot);
-        End::new(setting, level, at, d2, density, [bond, share])
+        let exponents = [to_barrier * (power - one) - rate * expiry, to_barrier * (power + one) - dividend * expiry];
+        End::new(setting, place, d2, density, Some(exponents))
     }
 
-    fn new(setting: &Setting<R>, level: Level, at: f64, d2: R, density: R, [bond, share]: [R; 2]) -> End<R> {
+    fn new(setting: &Setting<R>, place: Place<R>, d2: R, density: R, mirrored: Option<[R; 2]>) -> End<R> {
         let d1 = d2 + setting.deviation;
-        End {
-            level,
-            at,
-            cash: Edge::new(d2, density, bond),
-            share: Edge::new(d1, density.times(at), share),
-            density,
-            cash_weight: bond,
-            share_weight: share,
-            d1,
-            d2,
-        }
+        let Place { level, at, .. } = place;
+        let cash = Edge::new(d2, density);
+        let share = Edge::new(d1, density.times(at));
+        End { level, at, cash, share, density, d1, d2, mirrored }
     }
 
     /// Without volatility all mass is at the forward.
-    fn still(setting: &Setting<R>, level: Level, at: f64, distance: R, tie: f64) -> End<R> {
+    fn still(setting: &Setting<R>, place: Place<R>, distance: R, tie: f64) -> End<R> {
         let zero = R::of(0.0);
         let above = if distance > zero {
             1.0
@@ -98,21 +100,32 @@ impl<R: Functions> End<R> {
         } else {
             tie
         };
-        let edge = |total: R| Edge { above: total.times(above), below: total.times(1.0 - above) };
-        let (cash_weight, share_weight) = (setting.bond, setting.share);
-        End {
-            level,
-            at,
-            cash: edge(cash_weight),
-            share: edge(share_weight),
-            density: zero,
-            cash_weight,
-            share_weight,
-            d1: zero,
-            d2: zero,
-        }
+        let edge = |total: R| Edge { tail: total.times(above.min(1.0 - above)), low: above > 0.5 };
+        let (cash, share) = (edge(setting.bond), edge(setting.share));
+        End { level: place.level, at: place.at, cash, share, density: zero, d1: zero, d2: zero, mirrored: None }
+    }
+
+    /// Worth of cash wherever the spot ends.
+    pub(crate) fn cash_weight(&self, setting: &Setting<R>) -> R {
+        cash_weight(setting, self.mirrored)
+    }
+
+    /// Worth of a share wherever the spot ends.
+    pub(crate) fn share_weight(&self, setting: &Setting<R>) -> R {
+        share_weight(setting, self.mirrored)
     }
 }
+
+fn cash_weight<R: Functions>(setting: &Setting<R>, mirrored: Option<[R; 2]>) -> R {
+    mirrored.map_or(setting.bond, |[cash, _]| cash.exp())
+}
+
+fn share_weight<R: Functions>(setting: &Setting<R>, mirrored: Option<[R; 2]>) -> R {
+    mirrored.map_or(setting.share, |[_, share]| share.exp().times(setting.spot))
+}
+
+/// A strip by what its ends are.
+pub(crate) type Ends = (Option<Level>, Option<Level>);
 
 /// A straight line paid in a strip; an end that is not there is at 0 or at infinity.
 #[derive(Clone, Copy, Debug)]
@@ -134,18 +147,30 @@ impl<R: Functions> Sum<R> {
     pub(crate) fn cancelled(self) -> bool {
         self.value < self.terms.times(R::CANCELLED)
     }
+
+    /// Whether they have cancelled so far that what is derived from them needs more digits.
+    pub(crate) fn delicate(self) -> bool {
+        self.value.magnitude() < self.terms.times(R::DELICATE)
+    }
 }
 
 impl<R: Functions> Strip<R> {
+    pub(crate) fn cut(line: Line, ends: Ends, end: impl Fn(Level) -> End<R>) -> Strip<R> {
+        Strip { line, lower: ends.0.map(&end), upper: ends.1.map(&end) }
+    }
+
     /// Worth of the shares and of the cash, each with the magnitude of its terms.
     fn legs(&self, setting: &Setting<R>) -> [Sum<R>; 2] {
         let one = |worth: R| (worth, worth);
+        let share_weight = |end: &End<R>| end.share_weight(setting);
+        let cash_weight = |end: &End<R>| end.cash_weight(setting);
         let (share, cash) = match (&self.lower, &self.upper) {
             (None, None) => (one(setting.share), one(setting.bond)),
-            (Some(lower), None) => (one(lower.share.above), one(lower.cash.above)),
-            (None, Some(upper)) => (one(upper.share.below), one(upper.cash.below)),
+            (Some(end), None) => (one(end.share.above(|| share_weight(end))), one(end.cash.above(|| cash_weight(end)))),
+            (None, Some(end)) => (one(end.share.below(|| share_weight(end))), one(end.cash.below(|| cash_weight(end)))),
             (Some(lower), Some(upper)) => {
-                (Edge::between(lower.share, upper.share), Edge::between(lower.cash, upper.cash))
+                let shares = Edge::between(lower.share, upper.share, || share_weight(lower));
+                (shares, Edge::between(lower.cash, upper.cash, || cash_weight(lower)))
             }
         };
         // A leg that is not held must not turn an overflow of its worth into NaN.
@@ -169,7 +194,9 @@ impl<R: Functions> Strip<R> {
     pub(crate) fn sensitivity(&self, setting: &Setting<R>) -> Sensitivity<R> {
         let Setting { vol, rate, dividend, expiry, carry, variance, root_expiry, deviation, .. } = *setting;
         let [share, cash] = self.legs(setting);
-        let delicate = Sum { value: share.value - cash.value, terms: share.terms + cash.terms }.cancelled();
+        // Share and cash may cancel each other in the value, but not in its derivatives; the ends of a narrow strip
+        // cancel in both.
+        let delicate = share.delicate() || cash.delicate();
         let (share, cash) = (share.value, cash.value);
         let zero = R::of(0.0);
         let mut sum = Sensitivity { value: share - cash, delicate, ..Sensitivity::none() };

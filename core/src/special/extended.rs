@@ -24,6 +24,7 @@ fn twice_atanh(f: DoubleDouble) -> DoubleDouble {
 
 impl Functions for DoubleDouble {
     const CANCELLED: f64 = 1e-12;
+    const DELICATE: f64 = 0.0;
     const NEGLIGIBLE: f64 = 60.0;
     const POLISHED: bool = true;
 

@@ -7,8 +7,10 @@ use crate::special::{self, INV_ROOT_TWO_PI};
 pub(crate) trait Functions: Real {
     /// A sum below this fraction of its terms' magnitude has lost too many digits to cancellation; a form with
     /// positive terms only takes over. The seam is this low because the other form costs some microseconds, and
-    /// this high because above it the loss stays within 1e-14 (binary64) or 1e-18 (double-double) relative.
+    /// this high because above it the loss stays within 5e-14 (binary64) or 1e-18 (double-double) relative.
     const CANCELLED: f64;
+    /// The same for derivatives, which go by double-double below it.
+    const DELICATE: f64;
     /// An integrand is negligible where its exponent has lost this many units.
     const NEGLIGIBLE: f64;
 
@@ -28,7 +30,8 @@ pub(crate) trait Functions: Real {
 }
 
 impl Functions for f64 {
-    const CANCELLED: f64 = 1.0 / 32.0;
+    const CANCELLED: f64 = 1.0 / 128.0;
+    const DELICATE: f64 = 1.0 / 32.0;
     const NEGLIGIBLE: f64 = 45.0;
     const POLISHED: bool = false;
 
