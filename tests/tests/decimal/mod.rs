@@ -43,6 +43,12 @@ pub(crate) fn relative_error(found: f64, decimal: &str) -> f64 {
 /// unit stays what it is.
 pub(crate) fn ulps(found: f64, decimal: &str) -> f64 {
     let nearest = decimal.parse::<f64>().expect(decimal).abs();
+    if nearest == 0.0 {
+        return found.abs() / f64::from_bits(1);
+    }
+    if !nearest.is_finite() {
+        return relative_error(found, decimal);
+    }
     let relative = relative_error(found, decimal);
     let up = f64::from_bits(nearest.to_bits() + 1) - nearest;
     relative * (nearest / up)
