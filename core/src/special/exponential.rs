@@ -51,7 +51,7 @@ pub(crate) fn exp_sum<R: Lane>(high: R, low: R) -> R {
 ///
 /// # Accuracy
 ///
-/// At most 0.6 ulp on 2 million random arguments in (-745, 709.7) against 200-bit arithmetic.
+/// At most 0.84 ulp, measured on 100,000 random arguments in (-745, 709.7) against 160-bit ball arithmetic.
 pub fn exp(x: f64) -> f64 {
     if x.is_nan() { x } else { exp_sum(x, 0.0) }
 }
@@ -60,7 +60,7 @@ pub fn exp(x: f64) -> f64 {
 ///
 /// # Accuracy
 ///
-/// At most 1.5 ulp, measured as for [`exp`].
+/// At most 1.39 ulp, measured as for [`exp`].
 pub fn expm1(x: f64) -> f64 {
     if x.is_nan() || x.abs() < f64::EPSILON / 4.0 {
         return x;

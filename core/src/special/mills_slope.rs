@@ -19,3 +19,31 @@ pub(crate) fn mills_slope<R: Functions>(x: R) -> R {
     });
     sum
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::num::{DoubleDouble, Real};
+
+    #[test]
+    fn the_slope_is_seamless_between_its_two_forms() {
+        let (mut below, mut above) = (SEAM, SEAM);
+        for _ in 0..64 {
+            below = below.next_down();
+            for x in [below, above] {
+                let (fast, exact) = (mills_slope(x), mills_slope(DoubleDouble::of(x)).nearest());
+                assert!((fast / exact - 1.0).abs() <= 8.0 * f64::EPSILON, "{x}: {fast} and {exact}");
+            }
+            above = above.next_up();
+        }
+    }
+
+    #[test]
+    fn both_forms_are_exact_to_the_last_digits_everywhere() {
+        for step in -120..=120 {
+            let x = libm::exp2(f64::from(step) / 4.0);
+            let (fast, exact) = (mills_slope(x), mills_slope(DoubleDouble::of(x)).nearest());
+            assert!((fast / exact - 1.0).abs() <= 8.0 * f64::EPSILON, "{x}: {fast} and {exact}");
+        }
+    }
+}

@@ -12,7 +12,7 @@ pub(crate) const INV_ROOT_TWO_PI: f64 = 0.3989422804014327;
 ///
 /// # Accuracy
 ///
-/// At most 2 ulp for all `x` on 2 million random arguments against 200-bit arithmetic.
+/// At most 1.97 ulp, measured on 100,000 random arguments over all of binary64 against 160-bit ball arithmetic.
 pub fn normal_pdf(x: f64) -> f64 {
     if x.is_nan() {
         return x;
@@ -27,7 +27,7 @@ pub fn normal_pdf(x: f64) -> f64 {
 ///
 /// # Accuracy
 ///
-/// At most 4 ulp for all `x`, measured as for [`normal_pdf`].
+/// At most 6.2 ulp, measured as for [`normal_pdf`]; 99.9 % within 4.1 ulp.
 pub fn normal_tail(x: f64) -> f64 {
     if x.is_nan() {
         return x;
@@ -49,7 +49,7 @@ pub fn normal_cdf(x: f64) -> f64 {
 ///
 /// # Accuracy
 ///
-/// At most 4 ulp for all `x`, measured as for [`normal_pdf`].
+/// At most 7.4 ulp, measured as for [`normal_pdf`]; 99.9 % within 5.3 ulp below 0 and 2.3 ulp above.
 pub fn normal_log_tail(x: f64) -> f64 {
     if x.is_nan() {
         x
