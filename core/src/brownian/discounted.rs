@@ -147,8 +147,17 @@ mod tests {
 
     #[test]
     fn the_closed_form_meets_the_integral() {
-        for (vol, drift, distance) in [(1.0, 0.0, 0.5), (1.0, 0.25, 2.0), (0.5, -0.25, 0.125), (2.0, 1.0, 7.0)] {
-            let seam = (SEAM_ROOT * vol * vol * vol * vol - drift * drift) / (2.0 * vol * vol);
+        for (vol, drift, distance) in [
+            (1.0, 0.0, 0.5),
+            (1.0, 0.25, 2.0),
+            (0.5, -0.25, 0.125),
+            (2.0, 1.0, 7.0),
+            (0.25, 0.5, 0.1),
+            (0.25, -0.5, 0.1),
+        ] {
+            let (vol, drift): (f64, f64) = (vol, drift);
+            let scale = (vol * vol * vol * vol).max(drift * drift);
+            let seam = (SEAM_ROOT * scale - drift * drift) / (2.0 * vol * vol);
             let (worst, integrals) = walk(seam, |rate| [distance, drift, vol, 1.0, rate]);
             assert!(worst <= 16.0 * f64::EPSILON, "{vol} {drift} {distance}: {worst:e}");
             assert!(integrals > 0 && integrals < 128, "{integrals} of 128 by the integral");

@@ -123,3 +123,66 @@ impl<R: Functions> Walk<R> {
         time
     }
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    const PROBABILITIES: [f64; 9] = [1e-250, 1e-30, 1e-6, 0.01, 0.3, 0.5, 0.9, 0.99, 1.0 - 1e-12];
+
+    /// A cdf at a quantile is right to the rounding of the quantile and of what the cdf itself makes of it.
+    fn inverts(probability: f64, below: f64, above: f64, steepness: f64) -> bool {
+        let complement = 1.0 - probability;
+        let (found, wanted) = if probability < complement { (below, probability) } else { (above, complement) };
+        (found - wanted).abs() <= 64.0 * f64::EPSILON * (wanted + steepness)
+    }
+
+    #[test]
+    fn quantiles_invert_their_distributions() {
+        for (drift, vol, horizon) in [(0.1, 0.3, 2.0), (-0.7, 0.4, 0.5), (0.0, 1.0, 1.0), (3.0, 0.2, 1.0)] {
+            let walk = Walk::new(drift, vol, horizon);
+            for probability in PROBABILITIES {
+                let level = walk.max_quantile(probability, 1.0 - probability);
+                let steepness = level * walk.max_pdf(level);
+                let (below, above) = (walk.max_cdf(level), walk.max_tail(level));
+                assert!(
+                    inverts(probability, below, above, steepness),
+                    "{walk:?} {probability}: {level} {below} {above}"
+                );
+
+                let end = walk.terminal_quantile(probability);
+                let law = walk.end(end);
+                let steepness = (end.abs() + walk.mean.abs() + walk.deviation) * walk.terminal_pdf(end);
+                // Where the score is large the tail is that much steeper.
+                assert!(inverts(probability, law.below, law.above, 8.0 * steepness), "{walk:?} {probability}: {end}");
+
+                for level in [-0.4, 0.4] {
+                    let ever = walk.first_passage_cdf(level, f64::INFINITY);
+                    let time = walk.first_passage_quantile(level, probability);
+                    if probability >= ever {
+                        assert_eq!(time, f64::INFINITY);
+                        continue;
+                    }
+                    let (towards, distance) = walk.until(time).towards(level);
+                    let steepness = time * walk.first_passage_pdf(level, time);
+                    let (below, above) = (towards.max_tail(distance), towards.max_cdf(distance));
+                    let slack = if ever < 1.0 { probability } else { 0.0 };
+                    assert!(
+                        inverts(probability, below, above, steepness + slack),
+                        "{walk:?} {level} {probability}: {time}"
+                    );
+                }
+            }
+        }
+    }
+
+    #[test]
+    fn quantiles_at_the_ends() {
+        let walk = Walk::new(-0.2, 0.3, 2.0);
+        assert_eq!(walk.max_quantile(0.0, 1.0), 0.0);
+        assert_eq!(walk.max_quantile(1.0, 0.0), f64::INFINITY);
+        assert_eq!([0.0, 1.0].map(|p| walk.terminal_quantile(p)), [f64::NEG_INFINITY, f64::INFINITY]);
+        assert_eq!([0.0, 1.0].map(|p| walk.first_passage_quantile(0.5, p)), [0.0, f64::INFINITY]);
+        assert_eq!(walk.first_passage_quantile(0.0, 0.7), 0.0);
+    }
+}

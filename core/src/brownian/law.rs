@@ -5,7 +5,7 @@ use crate::brownian::quantity::LARGEST;
 use crate::error::{Error, Result, Status};
 
 /// The smallest volatility and horizon.
-const SMALLEST: f64 = 1.0 / LARGEST;
+const SMALLEST: f64 = 1e-75;
 
 /// The law of `W_t = drift t + vol B_t`, `B` a standard Brownian motion, `W_0 = 0`, watched continuously on
 /// `[0, horizon]`; `M` is its running maximum, `m` its running minimum.

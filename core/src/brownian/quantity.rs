@@ -251,3 +251,118 @@ fn checked(name: Option<&&str>, value: f64) -> Result<()> {
     };
     if valid { Ok(()) } else { Err(Error { status, value }) }
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    #[test]
+    fn codes_and_names_lead_back_to_their_quantity() {
+        for (code, quantity) in (0..).zip(Quantity::ALL) {
+            assert_eq!(quantity.code(), code);
+            assert_eq!(Quantity::from_code(code), Ok(quantity));
+            assert_eq!(Quantity::ALL.iter().filter(|other| other.name() == quantity.name()).count(), 1);
+            assert!((1..=2).contains(&quantity.arguments().len()));
+        }
+        assert_eq!(Quantity::from_code(25), Err(Error { status: Status::Quantity, value: 25.0 }));
+    }
+
+    #[test]
+    fn what_is_out_of_its_domain_is_refused_by_its_name_and_value() {
+        let law = Law::new(0.1, 0.3, 2.0).unwrap();
+        for quantity in Quantity::ALL {
+            for (place, name) in quantity.arguments().iter().enumerate() {
+                let (status, bad): (Status, &[f64]) = match *name {
+                    "level" => (Status::Level, &[f64::INFINITY, -1.1e75]),
+                    "terminal" => (Status::Terminal, &[f64::NEG_INFINITY, 1.1e75]),
+                    "time" => (Status::Time, &[-1e-300, f64::NEG_INFINITY]),
+                    "probability" => (Status::Probability, &[-5e-324, 1.0 + f64::EPSILON]),
+                    "uniform" => (Status::Uniform, &[0.0, 1.0, -0.5]),
+                    "discount_rate" => (Status::DiscountRate, &[f64::INFINITY, -1.1e75]),
+                    "other_drift" => (Status::OtherDrift, &[f64::INFINITY, 1.1e75]),
+                    other => panic!("{other}"),
+                };
+                for &value in bad.iter().chain(&[f64::NAN]) {
+                    let mut arguments = [0.5, 0.5];
+                    arguments[place] = value;
+                    for refused in [
+                        quantity.value(&law, arguments[0], arguments[1]),
+                        quantity.reference(&law, arguments[0], arguments[1]),
+                    ] {
+                        let error = refused.unwrap_err();
+                        assert_eq!(error.status, status, "{quantity:?} {name} {value}");
+                        assert_eq!(error.value.to_bits(), value.to_bits());
+                        assert_eq!(error.status.field(), *name);
+                    }
+                }
+            }
+        }
+        assert_eq!(law.first_passage_pdf(0.0, 1.0).unwrap_err().status, Status::Level);
+        for bad in [f64::NAN, f64::INFINITY, -1.1e75] {
+            assert_eq!(Law::new(bad, 0.3, 2.0).unwrap_err().status, Status::Drift);
+        }
+        for bad in [f64::NAN, f64::INFINITY, 0.0, -0.3, 0.9e-75] {
+            assert_eq!(Law::new(0.1, bad, 2.0).unwrap_err().status, Status::LawVol);
+            assert_eq!(Law::new(0.1, 0.3, bad).unwrap_err().status, Status::Horizon);
+        }
+    }
+
+    #[test]
+    fn the_second_argument_is_ignored_where_there_is_one_only() {
+        let law = Law::new(0.1, 0.3, 2.0).unwrap();
+        for quantity in Quantity::ALL.into_iter().filter(|quantity| quantity.arguments().len() == 1) {
+            assert_eq!(quantity.value(&law, 0.5, f64::NAN), quantity.value(&law, 0.5, 0.0));
+        }
+    }
+
+    #[test]
+    fn the_minimum_is_the_mirrored_maximum() {
+        let law = Law::new(0.1, 0.3, 2.0).unwrap();
+        let mirrored = Law::new(-0.1, 0.3, 2.0).unwrap();
+        for level in [1e-9, 0.05, 0.4, 2.0] {
+            assert_eq!(law.min_pdf(-level), mirrored.max_pdf(level));
+            assert_eq!(law.min_cdf(-level), mirrored.max_tail(level));
+            assert_eq!(law.min_tail(-level), mirrored.max_cdf(level));
+            assert_eq!(law.survival(-level), mirrored.survival(level));
+            assert_eq!(law.survival(level), law.max_cdf(level));
+            assert_eq!(law.survival(-level), law.min_tail(-level));
+            assert_eq!(law.joint_min_pdf(0.1, -level), mirrored.joint_max_pdf(-0.1, level));
+            // P(W <= x, m <= a) + P(W <= x, m > a) = P(W <= x)
+            let untouched = mirrored.max_cdf(level).unwrap() - mirrored.joint_max_cdf(-0.1, level).unwrap();
+            let sum = law.joint_min_cdf(0.1, -level).unwrap() + untouched;
+            let end = law.terminal_cdf(0.1).unwrap();
+            assert!((sum - end).abs() <= 4.0 * f64::EPSILON, "{level}: {sum} {end}");
+        }
+        for probability in [0.125, 0.5, 0.75] {
+            let level = law.min_quantile(probability).unwrap();
+            assert_eq!(level, -mirrored.max_quantile(1.0 - probability).unwrap());
+        }
+        assert_eq!([0.0, 1.0].map(|p| law.min_quantile(p).unwrap()), [f64::NEG_INFINITY, 0.0]);
+        assert_eq!(law.sample_min(0.2, 0.3).unwrap(), -mirrored.sample_max(-0.2, 0.3).unwrap());
+    }
+
+    #[test]
+    fn drawn_ends_and_maxima_have_their_joint_law() {
+        const SIDE: u32 = 256;
+        for (drift, vol, horizon) in [(0.1, 0.3, 2.0), (-0.7, 0.4, 0.5), (0.0, 1.0, 1.0)] {
+            let law = Law::new(drift, vol, horizon).unwrap();
+            let spread = vol * libm::sqrt(horizon);
+            for (terminal, level) in [(0.0, 0.5), (-0.5, 0.2), (1.0, 1.0), (0.7, 2.0)] {
+                let (terminal, level) = (drift * horizon + terminal * spread, level * spread);
+                let uniform = |index: u32| (f64::from(index) + 0.5) / f64::from(SIDE);
+                let mut count = 0;
+                for first in 0..SIDE {
+                    for second in 0..SIDE {
+                        let (end, maximum) = law.sample_terminal_max(uniform(first), uniform(second)).unwrap();
+                        assert!(maximum >= end && maximum >= 0.0);
+                        count += u32::from(end <= terminal && maximum <= level);
+                    }
+                }
+                let share = f64::from(count) / f64::from(SIDE * SIDE);
+                let wanted = law.joint_max_cdf(terminal, level).unwrap();
+                // A grid misses by its mesh along the border of the event.
+                assert!((share - wanted).abs() < 2.0 / f64::from(SIDE), "{law:?} {terminal} {level}: {share} {wanted}");
+            }
+        }
+    }
+}
