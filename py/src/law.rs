@@ -152,7 +152,7 @@ functions! {
     /// Probability that the end is at most `terminal`.
     ///
     /// >>> from floodmark.brownian import terminal_cdf
-    /// >>> terminal_cdf(0.0, vol=0.2, horizon=2.0)
+    /// >>> round(terminal_cdf(0.4, drift=0.2, vol=0.2, horizon=2.0), 12)
     /// 0.5
     terminal_cdf(terminal; horizon),
     "(terminal, *, drift=0.0, vol, horizon, with_status=False)",

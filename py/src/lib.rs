@@ -41,5 +41,7 @@ fn _native(module: &Bound<'_, PyModule>) -> PyResult<()> {
     module.add_function(wrap_pyfunction!(book::contract_columns, module)?)?;
     module.add_function(wrap_pyfunction!(sentence::status_text, module)?)?;
     law::add(module)?;
-    special::add(module)
+    special::add(module)?;
+    // What is public is said by the modules in Python.
+    module.delattr("__all__")
 }

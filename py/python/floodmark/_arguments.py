@@ -34,16 +34,20 @@ class _RebatePaid(dict[Any, int]):
         return NATURAL if missing(text) else UNKNOWN
 
 
+_MAY_BE_MISSING = ("rebate_paid",)
 _CODES = {
     "contract": _Contracts((text, code) for code, text in enumerate(CONTRACTS)),
-    "rebate_paid": _RebatePaid({"": NATURAL, None: NATURAL, **dict(REBATE_PAID)}),
+    "rebate_paid": _RebatePaid([("", NATURAL), (None, NATURAL), *REBATE_PAID]),
 }
 
 
 def texts(name: str, given: Any) -> np.ndarray[Any, Any]:
     """The argument as an array of texts."""
     array = _array(name, given, "text")
-    if array.dtype.kind not in "UOT" or (array.shape == () and not isinstance(array[()], str) and given is not None):
+    if array.dtype.kind == "f" and np.isnan(array).all():  # A column of a data frame that is all holes.
+        array = array.astype(object)
+    alone = array[()] if array.shape == () else ""
+    if array.dtype.kind not in "UOT" or not (isinstance(alone, str) or name in _MAY_BE_MISSING and missing(alone)):
         raise TypeError(_expected(name, given, "text"))
     return array
 
@@ -62,6 +66,8 @@ def numbers(name: str, given: Any) -> np.ndarray[Any, np.dtype[np.float64]]:
     """The argument as an array of float64, NaN where a table has nothing."""
     if type(given) is float:
         return np.array(given)
+    if given is None:
+        raise TypeError(_expected(name, given, "number"))
     array = _array(name, given, "number")
     if array.dtype.kind == "O":
         plain = [_number(name, element) for element in array.reshape(-1).tolist()]
