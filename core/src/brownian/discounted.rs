@@ -94,7 +94,8 @@ impl<R: Functions> DiscountedPassage<R> {
 fn moments<R: Functions>(start: R, tilt: R, prefactor: R) -> [R; 3] {
     let square = start.square();
     let one = R::of(1.0);
-    let length = 0.5 * special::log1p(2.0 * R::NEGLIGIBLE / square.nearest());
+    // Even a square that underflows must not make the way infinite.
+    let length = 0.5 * special::log1p(2.0 * R::NEGLIGIBLE / square.nearest().max(1e-300));
     let finest = 2.0 / (1.0 + square.nearest() + 2.0 * tilt.magnitude().nearest());
     // Near the level the value is that of certain touching and a little more: only the little is integrated.
     let near = start < one;

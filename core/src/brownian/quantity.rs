@@ -365,4 +365,57 @@ mod tests {
             }
         }
     }
+
+    /// Whether an answer is one that the quantity can have.
+    fn possible(quantity: Quantity, answer: f64) -> bool {
+        match quantity {
+            Quantity::TerminalQuantile | Quantity::SampleTerminal | Quantity::SampleMin => !answer.is_nan(),
+            Quantity::MinQuantile => answer <= 0.0,
+            Quantity::TerminalCdf
+            | Quantity::MaxCdf
+            | Quantity::MaxTail
+            | Quantity::MinCdf
+            | Quantity::MinTail
+            | Quantity::JointMaxCdf
+            | Quantity::JointMinCdf
+            | Quantity::Survival
+            | Quantity::FirstPassageCdf
+            | Quantity::BridgeCrossing => (0.0..=1.0).contains(&answer),
+            _ => answer >= 0.0,
+        }
+    }
+
+    #[test]
+    fn a_wild_input_has_a_possible_answer_or_a_status() {
+        const WILD: [f64; 11] = [-1e75, -1e30, -2.0, -1e-30, -1e-75, 0.0, 1e-75, 1e-30, 0.5, 1e30, 1e75];
+        const WILD_POSITIVE: [f64; 5] = [1e-75, 1e-30, 0.5, 1e30, 1e75];
+        let mut answers = [0; 25];
+        for drift in WILD {
+            for vol in WILD_POSITIVE {
+                for horizon in WILD_POSITIVE {
+                    let law = Law::new(drift, vol, horizon).unwrap();
+                    for quantity in Quantity::ALL {
+                        for first in WILD {
+                            for second in WILD {
+                                match quantity.value(&law, first, second) {
+                                    Ok(answer) => {
+                                        assert!(
+                                            possible(quantity, answer),
+                                            "{quantity:?} of {law:?} at {first:e}, {second:e} is {answer:e}"
+                                        );
+                                        answers[usize::from(quantity.code())] += 1;
+                                    }
+                                    Err(error) => assert_ne!(error.status, Status::Ok),
+                                }
+                                if quantity.arguments().len() == 1 {
+                                    break;
+                                }
+                            }
+                        }
+                    }
+                }
+            }
+        }
+        assert!(answers.iter().all(|&count| count > 100), "{answers:?}");
+    }
 }

@@ -1,6 +1,6 @@
 //! Brownian motion with drift over a horizon, with the numbers that follow, and the law of where it ends.
 
-use crate::brownian::{Edge, density};
+use crate::brownian::{Edge, Sides, density};
 use crate::special::{Functions, normal_quantile};
 
 /// `W_t = drift t + vol B_t`, `W_0 = 0`, up to the horizon.
@@ -36,9 +36,9 @@ impl<R: Functions> Walk<R> {
     }
 
     /// Mass of the end on either side of a point.
-    pub(crate) fn end(&self, at: R) -> Edge<R> {
+    pub(crate) fn end(&self, at: R) -> Sides<R> {
         let score = self.score(at);
-        Edge::new(score, density(score.square().times(-0.5)), R::of(1.0))
+        Edge::new(score, density(score.square().times(-0.5))).sides(R::of(1.0))
     }
 
     /// Density of the end.
@@ -54,8 +54,9 @@ impl<R: Functions> Walk<R> {
         }
         if R::POLISHED {
             for _ in 0..2 {
-                let law = Edge::new(-score, density(score.square().times(-0.5)), R::of(1.0));
-                score = score - (law.below - probability) / density(score.square().times(-0.5));
+                let density = density(score.square().times(-0.5));
+                let below = Edge::new(-score, density).below(|| R::of(1.0));
+                score = score - (below - probability) / density;
             }
         }
         self.mean + self.deviation * score

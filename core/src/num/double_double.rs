@@ -82,6 +82,9 @@ impl Add for DoubleDouble {
 
     fn add(self, other: DoubleDouble) -> DoubleDouble {
         let high = DoubleDouble::sum(self.high, other.high);
+        if !high.high.is_finite() {
+            return high;
+        }
         let low = DoubleDouble::sum(self.low, other.low);
         let middle = DoubleDouble::ordered_sum(high.high, high.low + low.high);
         DoubleDouble::ordered_sum(middle.high, middle.low + low.low)
@@ -101,6 +104,9 @@ impl Mul for DoubleDouble {
 
     fn mul(self, other: DoubleDouble) -> DoubleDouble {
         let product = DoubleDouble::product(self.high, other.high);
+        if !product.high.is_finite() {
+            return product;
+        }
         let cross = self.high * other.low + self.low * other.high;
         DoubleDouble::ordered_sum(product.high, product.low + cross)
     }
@@ -133,6 +139,9 @@ impl Real for DoubleDouble {
 
     fn times(self, factor: f64) -> DoubleDouble {
         let product = DoubleDouble::product(self.high, factor);
+        if !product.high.is_finite() {
+            return product;
+        }
         DoubleDouble::ordered_sum(product.high, product.low + self.low * factor)
     }
 

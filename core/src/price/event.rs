@@ -210,8 +210,11 @@ impl<R: Functions> Claim<R> {
         let mirrored = image.closed(setting);
         match (self.event, &self.plain) {
             (Event::Untouched, Some(live)) => {
-                let (plain, mirrored) = (live.closed(setting).value, mirrored.value);
-                Sum { value: plain - mirrored, terms: plain.magnitude() + mirrored.magnitude() }.delicate()
+                let plain = live.closed(setting);
+                let alike = Sum { value: plain.value - mirrored.value, terms: plain.value + mirrored.value };
+                // What share and cash leave of each other weighs half as much.
+                let small = Sum { value: alike.value.times(2.0), terms: plain.terms + mirrored.terms };
+                alike.delicate() || small.delicate()
             }
             _ => mirrored.delicate(),
         }

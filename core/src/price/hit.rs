@@ -13,14 +13,13 @@ use crate::special::Functions;
 use crate::terms::Direction;
 
 /// A quantity with its derivatives in distance `h`, volatility `v`, rate and dividend yield: the first, and
-/// the second in `hh`, `hv`, `vv`. Time enters the passage only through the density and needs no entry.
+/// the second in `hv`, `vv`. Time enters the passage only through the density and needs no entry.
 #[derive(Clone, Copy, Debug)]
 struct Chain<R> {
     h: R,
     v: R,
     rate: R,
     dividend: R,
-    hh: R,
     hv: R,
     vv: R,
 }
@@ -34,7 +33,6 @@ impl<R: Functions> Add for Chain<R> {
             v: self.v + other.v,
             rate: self.rate + other.rate,
             dividend: self.dividend + other.dividend,
-            hh: self.hh + other.hh,
             hv: self.hv + other.hv,
             vv: self.vv + other.vv,
         }
@@ -45,16 +43,36 @@ impl<R: Functions> Chain<R> {
     /// The first derivatives of a pair of inputs, and the second in both.
     fn pair(self, pair: Pair) -> [R; 3] {
         match pair {
-            Pair::Hh => [self.h, self.h, self.hh],
             Pair::Hv => [self.h, self.v, self.hv],
             Pair::Vv => [self.v, self.v, self.vv],
         }
     }
 }
 
+/// The derivatives of a term, or of the whole.
+#[derive(Clone, Copy, Debug)]
+struct Gradient<R> {
+    first_and_mixed: Chain<R>,
+    /// The second derivative in the logarithm of the spot less the first: gamma's.
+    bend: R,
+    /// The magnitude of what the second derivative in volatility is the sum of.
+    vv_terms: R,
+}
+
+impl<R: Functions> Add for Gradient<R> {
+    type Output = Gradient<R>;
+
+    fn add(self, other: Gradient<R>) -> Gradient<R> {
+        Gradient {
+            first_and_mixed: self.first_and_mixed + other.first_and_mixed,
+            bend: self.bend + other.bend,
+            vv_terms: self.vv_terms + other.vv_terms,
+        }
+    }
+}
+
 #[derive(Clone, Copy, Debug)]
 enum Pair {
-    Hh,
     Hv,
     Vv,
 }
@@ -71,7 +89,7 @@ pub(crate) fn sensitivity<R: Functions>(setting: &Setting<R>, levels: &Levels) -
     }
     let (passage, path) = passage(setting, levels);
     let Path { distance, drift, sign, score, .. } = path;
-    let gradient = match passage.form {
+    let Gradient { first_and_mixed: gradient, bend, vv_terms } = match passage.form {
         Form::Closed { root, terms } => path.leg(&passage, root, terms[0]) + path.leg(&passage, -root, terms[1]),
         Form::Integral { moments } => path.integral(&passage, moments),
     };
@@ -81,9 +99,10 @@ pub(crate) fn sensitivity<R: Functions>(setting: &Setting<R>, levels: &Levels) -
     Sensitivity {
         value: passage.value,
         slope: gradient.h.times(-sign),
-        bend: gradient.hh + gradient.h.times(sign),
+        bend,
         vol: gradient.v,
         vol_vol: gradient.vv,
+        vol_vol_terms: vv_terms,
         slope_vol: gradient.hv.times(-sign),
         time: density * distance,
         slope_time: density_h.times(-sign),
@@ -106,6 +125,8 @@ pub(crate) struct Path<R> {
     vol: R,
     variance: R,
     rate: R,
+    dividend: R,
+    carry: R,
     expiry: R,
     root_expiry: R,
     /// `vol sqrt(expiry)`
@@ -142,10 +163,21 @@ impl<R: Functions> Path<R> {
         }
     }
 
+    /// `(drift - root) / vol^2 + sign`, which is that exponent in the measure of the share, by whichever form keeps
+    /// its digits: `root^2` is also `share_drift^2 + 2 dividend vol^2`.
+    fn share_exponent(&self, root: R) -> R {
+        let share_drift = self.drift + self.variance.times(self.sign);
+        if (share_drift > R::of(0.0)) == (root > R::of(0.0)) {
+            self.dividend.times(-2.0) / (share_drift + root)
+        } else {
+            (share_drift - root) / self.variance
+        }
+    }
+
     /// Derivatives of `exp((drift - root) distance / vol^2) N((root expiry - distance) / deviation)`; with the
     /// sign of `root` changed it is the other term.
-    fn leg(&self, passage: &DiscountedPassage<R>, root: R, term: R) -> Chain<R> {
-        let Path { distance, drift, sign, vol, variance, rate, expiry, root_expiry, deviation, score } = *self;
+    fn leg(&self, passage: &DiscountedPassage<R>, root: R, term: R) -> Gradient<R> {
+        let Path { distance, drift, sign, vol, variance, rate, expiry, root_expiry, deviation, score, .. } = *self;
         let (zero, one) = (R::of(0.0), R::of(1.0));
         let [drift_v, drift_vv] = self.drift_v();
         let root_v = (drift * drift_v + (rate * vol).times(2.0)) / root;
@@ -156,7 +188,6 @@ impl<R: Functions> Path<R> {
             v: distance * slope_v,
             rate: -distance * (one + slope.times(sign)) / root,
             dividend: distance * slope.times(sign) / root,
-            hh: zero,
             hv: slope_v,
             vv: distance * slope_vv,
         };
@@ -170,28 +201,34 @@ impl<R: Functions> Path<R> {
             // In rate and yield the scores of the two terms move against each other.
             rate: zero,
             dividend: zero,
-            hh: zero,
             hv: one / (deviation * vol),
             vv: score.times(2.0) / variance + reach_vv,
         };
-        let second = |pair: Pair| {
+        let parts = |pair: Pair| {
             let [e1, e2, e12] = exponent.pair(pair);
             let [z1, z2, z12] = z_chain.pair(pair);
-            term * (e1 * e2 + e12) + passage.density * (e1 * z2 + e2 * z1 + z12 - z * z1 * z2)
+            let density = passage.density;
+            [term * (e1 * e2), term * e12, density * (e1 * z2 + e2 * z1 + z12), -density * (z * z1 * z2)]
         };
-        Chain {
+        let second = |pair: Pair| parts(pair).into_iter().fold(zero, |sum, part| sum + part);
+        let chain = Chain {
             h: term * exponent.h + passage.density * z_chain.h,
             v: term * exponent.v + passage.density * z_chain.v,
             rate: term * exponent.rate,
             dividend: term * exponent.dividend,
-            hh: second(Pair::Hh),
             hv: second(Pair::Hv),
             vv: second(Pair::Vv),
+        };
+        let by_share = self.share_exponent(root);
+        Gradient {
+            first_and_mixed: chain,
+            bend: term * (slope * by_share) + passage.density * z_chain.h * (slope + by_share - z * z_chain.h),
+            vv_terms: parts(Pair::Vv).into_iter().fold(zero, |sum, part| sum + part.magnitude()),
         }
     }
 
     /// Derivatives of the integral, through its prefactor `exp(a)`, its start `y` and `c`.
-    fn integral(&self, passage: &DiscountedPassage<R>, [first, second_moment]: [R; 2]) -> Chain<R> {
+    fn integral(&self, passage: &DiscountedPassage<R>, [first, second_moment]: [R; 2]) -> Gradient<R> {
         let Path { distance, drift, sign, vol, variance, rate, expiry, deviation, score, .. } = *self;
         let (zero, one) = (R::of(0.0), R::of(1.0));
         let fourth = variance.square();
@@ -203,7 +240,6 @@ impl<R: Functions> Path<R> {
             v: distance * a_hv,
             rate: per_variance,
             dividend: -per_variance,
-            hh: zero,
             hv: a_hv,
             vv: distance * a_hvv,
         };
@@ -220,7 +256,6 @@ impl<R: Functions> Path<R> {
             v: half_square * ratio_v,
             rate: distance.square() * (drift.times(sign) + variance) / fourth,
             dividend: -(distance.square() * drift.times(sign)) / fourth,
-            hh: ratio,
             hv: distance * ratio_v,
             vv: half_square * ratio_vv,
         };
@@ -230,7 +265,6 @@ impl<R: Functions> Path<R> {
             v: -y / vol,
             rate: zero,
             dividend: zero,
-            hh: zero,
             hv: -one / (deviation * vol),
             vv: y.times(2.0) / variance,
         };
@@ -248,29 +282,30 @@ impl<R: Functions> Path<R> {
         let h = derivative(a.h, c.h, start.h);
         // From the backward equation: the chain rule's own terms grow as 1 / y and cancel near the barrier.
         let time = passage.density * distance / (deviation * expiry);
-        let hh = (time + drift * h + rate * passage.value).times(2.0) / variance;
-        Chain {
+        let bend = (time + self.carry.times(sign) * h + rate * passage.value).times(2.0) / variance;
+        let chain = Chain {
             h,
             v: derivative(a.v, c.v, start.v),
             rate: derivative(a.rate, c.rate, zero),
             dividend: derivative(a.dividend, c.dividend, zero),
-            hh,
             hv: second(Pair::Hv),
             vv: second(Pair::Vv),
-        }
+        };
+        Gradient { first_and_mixed: chain, bend, vv_terms: zero }
     }
 }
 
 /// The passage, and the way to it.
 pub(crate) fn passage<R: Functions>(setting: &Setting<R>, levels: &Levels) -> (DiscountedPassage<R>, Path<R>) {
-    let Setting { spot, vol, variance, rate, expiry, carry, root_expiry, deviation, .. } = *setting;
+    let Setting { spot, vol, variance, rate, dividend, expiry, carry, root_expiry, deviation, .. } = *setting;
     let (distance, sign) = match levels.direction {
         Direction::Up => (R::ln_ratio(levels.barrier, spot), 1.0),
         Direction::Down => (R::ln_ratio(spot, levels.barrier), -1.0),
     };
     let drift = (carry - variance.times(0.5)).times(sign);
     let score = -distance / deviation;
-    let path = Path { distance, drift, sign, vol, variance, rate, expiry, root_expiry, deviation, score };
+    let path =
+        Path { distance, drift, sign, vol, variance, rate, dividend, carry, expiry, root_expiry, deviation, score };
     (DiscountedPassage::new(distance, drift, vol, expiry, rate), path)
 }
 

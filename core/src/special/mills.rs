@@ -67,6 +67,8 @@ pub fn mills_ratio(x: f64) -> f64 {
     } else if x < 0.0 {
         /// sqrt(2 pi)
         const ROOT_TWO_PI: f64 = 2.5066282746310002;
+        // Beyond 40 the ratio is infinite, and a huge square must not make NaN.
+        let x = x.max(-40.0);
         let half = x.upper_half();
         let gaussian = exp_sum(0.5 * half * half, 0.5 * (x - half) * (x + half));
         ROOT_TWO_PI * gaussian - mills_ratio_lane(-x)
