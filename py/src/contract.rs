@@ -184,8 +184,9 @@ contract_function! {
     /// for what is no number or text.
     ///
     /// >>> import floodmark
-    /// >>> floodmark.price("up-and-out call", spot=105.0, strike=100.0, barrier=120.0, expiry=0.5, vol=0.2)
-    /// 2.1063754556933656
+    /// >>> value = floodmark.price("up-and-out call", spot=105.0, strike=100.0, barrier=120.0, expiry=0.5, vol=0.2)
+    /// >>> round(value, 12)
+    /// 2.106375455693
     price,
     "(contract, *, spot, strike=None, barrier=None, expiry, vol, rate=0.0, dividend=0.0, rebate=0.0, \
       rebate_paid=None, with_status=False, error_bound=False)",

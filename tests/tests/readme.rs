@@ -8,6 +8,7 @@ use std::process::Command;
 
 use floodmark::price::{Greeks, greeks};
 use floodmark::terms::{Contract, Market, RebatePaid, TermSheet};
+use floodmark_tests::python::python;
 use floodmark_tests::{root, run, scratch};
 
 /// The blocks of code of the README in this language.
@@ -84,4 +85,12 @@ fn the_c_prints_what_the_core_says() {
     let source = file("ten_lines.c", &block("c"));
     let program = c_library::compile(source.to_str().unwrap(), c_library::Link::Static, "readme", &[]);
     check(&run(&mut c_library::command(&program)));
+}
+
+#[test]
+fn the_python_prints_what_the_core_says() {
+    let said = run(python().arg(file("ten_lines.py", &block("python"))));
+    let (first, second) = said.split_once('\n').unwrap();
+    check(first);
+    assert!(second.trim().parse::<f64>().unwrap() > expected().value, "{said}");
 }
