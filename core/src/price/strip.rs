@@ -169,8 +169,14 @@ impl<R: Functions> Strip<R> {
             (Some(end), None) => (one(end.share.above(|| share_weight(end))), one(end.cash.above(|| cash_weight(end)))),
             (None, Some(end)) => (one(end.share.below(|| share_weight(end))), one(end.cash.below(|| cash_weight(end)))),
             (Some(lower), Some(upper)) => {
+                // The roundings of two scores in one tail differ, and weigh with the scores' squares.
+                let weighed = |(worth, terms): (R, R), a: R, b: R| {
+                    let nearer = a.square().smaller(b.square()).times(0.5);
+                    (worth, if a * b > R::of(0.0) { terms * (R::of(1.0) + nearer) } else { terms })
+                };
                 let shares = Edge::between(lower.share, upper.share, || share_weight(lower));
-                (shares, Edge::between(lower.cash, upper.cash, || cash_weight(lower)))
+                let cash = Edge::between(lower.cash, upper.cash, || cash_weight(lower));
+                (weighed(shares, lower.d1, upper.d1), weighed(cash, lower.d2, upper.d2))
             }
         };
         // A leg that is not held must not turn an overflow of its worth into NaN.
