@@ -35,6 +35,8 @@ pub(crate) struct Block {
     greeks: [Vec<f64>; Greeks::NAMES.len()],
     touch_probability: Vec<f64>,
     distance: Vec<f64>,
+    value: Vec<f64>,
+    error_bound: Vec<f64>,
     status: Vec<i32>,
     parity: Parity,
 }
@@ -71,6 +73,8 @@ impl Block {
             greeks: std::array::from_fn(|_| column()),
             touch_probability: column(),
             distance: column(),
+            value: column(),
+            error_bound: column(),
             status: vec![0; ROWS],
             parity: Parity::default(),
         }
@@ -142,6 +146,9 @@ impl Block {
             gap: None,
         };
         batch::barrier_profile(&book, &mut profile, &mut status)?;
+        let (mut value, mut error_bound) =
+            (ColumnMut::from_slice(&mut self.value), ColumnMut::from_slice(&mut self.error_bound));
+        batch::bounded_price(&book, &mut value, &mut error_bound, &mut status)?;
         let columns = self.greeks.each_mut().map(|column| Some(ColumnMut::from_slice(column)));
         batch::greeks(&book, &mut GreekColumns { columns }, &mut status)?;
         for row in 0..self.rows {
@@ -167,6 +174,8 @@ impl Block {
                 None => out.extend_from_slice(Status::Ok.rule().as_bytes()),
                 Some(refusal) => write_text(out, refusal.to_string().as_bytes()),
             }
+            out.push(b',');
+            write_number(out, self.error_bound[row]);
             out.push(b'\n');
         }
     }

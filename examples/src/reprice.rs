@@ -10,7 +10,7 @@ use crate::summary::Summary;
 
 /// The header of the output.
 pub const HEADER: &str = "id,value,delta,gamma,vega,theta,rho,dividend_rho,vanna,volga,charm,barrier_delta,strike_delta,\
-                          touch_probability,status";
+                          touch_probability,status,error_bound";
 
 /// Why a book could not be repriced to its end.
 #[derive(Debug)]

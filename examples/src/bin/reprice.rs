@@ -27,8 +27,8 @@ of which rebate (0 where empty) and rebate_paid (as is natural where empty) may 
                up one-touch, down one-touch, up no-touch, down no-touch
   rebate_paid  hit or expiry
   expiry in years, vol per square root of a year, rate and dividend per year and continuously compounded
-Each row gets its value, its Greeks, its probability of touching and a status: ok, or what is wrong with the row,
-whose numbers are then NaN.
+Each row gets its value, its Greeks, its probability of touching, a status (ok, or what is wrong with the row, whose
+numbers are then NaN) and a bound on how far arithmetic has taken the value from the exact one.
 
 The summary goes to standard output when the values go to a file, and to standard error otherwise.
 Exit status: 0 all rows valued, 1 some rows refused, 2 the book cannot be read or the values cannot be written.
