@@ -18,7 +18,7 @@ pub fn python() -> Command {
     static INTERPRETER: OnceLock<PathBuf> = OnceLock::new();
     let interpreter = INTERPRETER.get_or_init(|| {
         let folder = scratch("python");
-        // Another run of the tests may be at it: the lock is theirs until their process is done with it.
+        // Another run of the tests may be making it: wait for that.
         let lock = File::create(folder.join("lock")).expect("the lock can be made");
         lock.lock().expect("the lock can be taken");
         up_to_date(&folder)
@@ -66,11 +66,13 @@ fn python3(arguments: &[&str]) -> Command {
     command
 }
 
-/// Does the work unless the stamp says that it was done for the same things; then stamps.
+/// Does the work unless the stamp says that it was done for the same things; then stamps. Work that fails half way
+/// leaves no stamp, so that the next run does not take it for done.
 fn in_step(stamp: &Path, things: &str, interpreter: &Path, work: impl FnOnce()) {
     if interpreter.exists() && fs::read_to_string(stamp).is_ok_and(|done| done == things) {
         return;
     }
+    let _ = fs::remove_file(stamp);
     work();
     fs::write(stamp, things).expect("the stamp can be written");
 }
