@@ -1,5 +1,6 @@
 """The package as a whole: names, results, tables from data frames, threads, examples in its documentation."""
 
+import ast
 import doctest
 import inspect
 import pickle
@@ -171,3 +172,17 @@ def test_arguments_of_contract_functions_are_the_same_everywhere() -> None:
     for function in (floodmark.barrier_profile, floodmark.reference_price, floodmark.reference_greeks):
         assert list(inspect.signature(function).parameters.values()) == expected
     assert list(inspect.signature(floodmark.price).parameters.values())[:-1] == expected
+
+
+def test_every_default_in_the_stub_is_that_of_the_function() -> None:
+    # The stub checker is lenient where signatures are overloaded.
+    stub = ast.parse((Path(floodmark.__file__).parent / "_native.pyi").read_text())
+    checked = 0
+    for function in stub.body:
+        if isinstance(function, ast.FunctionDef) and function.args.kwonlyargs:
+            parameters = inspect.signature(getattr(_native, function.name)).parameters
+            for argument, default in zip(function.args.kwonlyargs, function.args.kw_defaults, strict=True):
+                if default is not None:
+                    assert ast.literal_eval(default) == parameters[argument.arg].default, (function.name, argument.arg)
+                    checked += 1
+    assert checked > 100
