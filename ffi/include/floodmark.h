@@ -511,6 +511,20 @@ typedef struct FloodmarkProfileColumns {
 } FloodmarkProfileColumns;
 
 /**
+ * A value with a bound on its error.
+ */
+typedef struct FloodmarkBoundedPrice {
+    /**
+     * The value, bit for bit what floodmark_price returns.
+     */
+    double value;
+    /**
+     * The value of the exact binary inputs lies within this of value.
+     */
+    double error_bound;
+} FloodmarkBoundedPrice;
+
+/**
  * The inputs of a quantity of the law of W_t = drift t + vol B_t on [0, horizon], one law a row.
  */
 typedef struct FloodmarkLawColumns {
@@ -732,6 +746,87 @@ int32_t floodmark_barrier_profile_columns(const struct FloodmarkBook *book,
                                           const struct FloodmarkProfileColumns *profile,
                                           struct FloodmarkStatuses status,
                                           size_t *refused);
+
+/**
+ * What is a contract worth now, and how far can that be from the value of the exact binary inputs?
+ *
+ * Formula: floodmark_price, with the sum of what the roundings of its terms can amount to. The bound speaks of
+ * arithmetic alone, not of the model.
+ *
+ * Domain and errors: as floodmark_price.
+ *
+ * Memory: bounded is null, or aligned and writable.
+ */
+int32_t floodmark_bounded_price(uint8_t contract,
+                                double spot,
+                                double strike,
+                                double barrier,
+                                double rebate,
+                                uint8_t rebate_paid,
+                                double expiry,
+                                double vol,
+                                double rate,
+                                double dividend,
+                                struct FloodmarkBoundedPrice *bounded);
+
+/**
+ * What is a contract worth now, correct to the last place?
+ *
+ * Formula: floodmark_price in some 31 digits, rounded once: the oracle for audits and tests, at some microseconds
+ * to milliseconds a call.
+ *
+ * Domain and errors: as floodmark_price.
+ *
+ * Memory: value is null, or aligned and writable.
+ */
+int32_t floodmark_reference_price(uint8_t contract,
+                                  double spot,
+                                  double strike,
+                                  double barrier,
+                                  double rebate,
+                                  uint8_t rebate_paid,
+                                  double expiry,
+                                  double vol,
+                                  double rate,
+                                  double dividend,
+                                  double *value);
+
+/**
+ * What is a contract worth now, and how does that change with each input, from the reference path?
+ *
+ * Formula: floodmark_greeks in some 31 digits, rounded once.
+ *
+ * Domain and errors: as floodmark_price.
+ *
+ * Memory: greeks is null, or aligned and writable.
+ */
+int32_t floodmark_reference_greeks(uint8_t contract,
+                                   double spot,
+                                   double strike,
+                                   double barrier,
+                                   double rebate,
+                                   uint8_t rebate_paid,
+                                   double expiry,
+                                   double vol,
+                                   double rate,
+                                   double dividend,
+                                   struct FloodmarkGreeks *greeks);
+
+/**
+ * What is each contract of a book worth now, and how exact is each value?
+ *
+ * Formula and domain: floodmark_bounded_price, row by row. Rows are refused as in floodmark_price_columns.
+ *
+ * Errors of the call: FLOODMARK_STATUS_NULL_POINTER if book is null, or an input column, value, error_bound or
+ * status is null while there are rows; then nothing is written.
+ *
+ * Memory: As floodmark_price_columns.
+ */
+int32_t floodmark_bounded_price_columns(const struct FloodmarkBook *book,
+                                        struct FloodmarkResults value,
+                                        struct FloodmarkResults error_bound,
+                                        struct FloodmarkStatuses status,
+                                        size_t *refused);
 
 /**
  * How dense is the end point W_T at terminal?

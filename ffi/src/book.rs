@@ -191,7 +191,7 @@ pub unsafe extern "C" fn floodmark_barrier_profile_columns(
 /// # Safety
 ///
 /// `book` is null or aligned and readable, and its columns are as [`input`] asks.
-unsafe fn read<'a>(book: *const FloodmarkBook) -> Result<Book<'a>> {
+pub(crate) unsafe fn read<'a>(book: *const FloodmarkBook) -> Result<Book<'a>> {
     // SAFETY: the caller's promise.
     unsafe {
         let book = book.as_ref().ok_or(NULL)?;

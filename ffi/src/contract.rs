@@ -181,7 +181,14 @@ pub unsafe extern "C" fn floodmark_barrier_profile(
     unsafe { answer(profile, call) }
 }
 
-fn sheet(contract: u8, strike: f64, barrier: f64, rebate: f64, rebate_paid: u8, expiry: f64) -> Result<TermSheet> {
+pub(crate) fn sheet(
+    contract: u8,
+    strike: f64,
+    barrier: f64,
+    rebate: f64,
+    rebate_paid: u8,
+    expiry: f64,
+) -> Result<TermSheet> {
     let contract = Contract::from_code(contract)?;
     let rebate_paid = RebatePaid::from_code(rebate_paid, contract)?;
     Ok(TermSheet { contract, strike, barrier, rebate, rebate_paid, expiry })

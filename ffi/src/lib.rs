@@ -15,6 +15,8 @@ pub mod column;
 
 pub mod book;
 
+pub mod exactness;
+
 pub mod law;
 
 mod border;

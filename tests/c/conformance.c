@@ -50,6 +50,21 @@ static int32_t profile(struct inputs i, FloodmarkBarrierProfile *out) {
                                      i.rate, i.dividend, out);
 }
 
+static int32_t bounded_price(struct inputs i, FloodmarkBoundedPrice *out) {
+    return floodmark_bounded_price(i.contract, i.spot, i.strike, i.barrier, i.rebate, i.rebate_paid, i.expiry, i.vol,
+                                   i.rate, i.dividend, out);
+}
+
+static int32_t reference_price(struct inputs i, double *value) {
+    return floodmark_reference_price(i.contract, i.spot, i.strike, i.barrier, i.rebate, i.rebate_paid, i.expiry, i.vol,
+                                     i.rate, i.dividend, value);
+}
+
+static int32_t reference_greeks(struct inputs i, FloodmarkGreeks *out) {
+    return floodmark_reference_greeks(i.contract, i.spot, i.strike, i.barrier, i.rebate, i.rebate_paid, i.expiry, i.vol,
+                                      i.rate, i.dividend, out);
+}
+
 static void print_claims(void) {
 #define CONSTANT(name) printf(#name " %ld\n", (long)(name))
 #define SIZE(type) printf("sizeof " #type " %zu\n", sizeof(type))
@@ -454,6 +469,46 @@ static void a_law_answers_one_by_one_and_in_columns(void) {
     CHECK(floodmark_law_columns(FLOODMARK_QUANTITY_MAX_CDF, &law, no_value, no_status, NULL) == FLOODMARK_STATUS_OK);
 }
 
+static void a_price_is_within_its_bound_of_the_reference(void) {
+    struct row rows[ROWS];
+    double values[ROWS], bounds[ROWS];
+    int32_t statuses[ROWS];
+    make_rows(rows);
+    FloodmarkBook book = book_of(rows, ROWS);
+    FloodmarkResults value = {values, 1}, bound = {bounds, 1}, nowhere = {NULL, 1};
+    FloodmarkStatuses status = {statuses, 1};
+    size_t refused = 99;
+    CHECK(floodmark_bounded_price_columns(&book, value, bound, status, &refused) == FLOODMARK_STATUS_OK);
+    CHECK(refused == 1);
+    CHECK(floodmark_bounded_price_columns(&book, value, nowhere, status, NULL) == FLOODMARK_STATUS_NULL_POINTER);
+    CHECK(floodmark_bounded_price_columns(NULL, value, bound, status, NULL) == FLOODMARK_STATUS_NULL_POINTER);
+    for (int n = 0; n < ROWS; n += 1) {
+        FloodmarkBoundedPrice bounded = {UNTOUCHED, UNTOUCHED};
+        FloodmarkGreeks risk;
+        double exact = UNTOUCHED, fast = UNTOUCHED;
+        risk.value = UNTOUCHED;
+        int32_t expected = n == 3 ? FLOODMARK_STATUS_VOL : FLOODMARK_STATUS_OK;
+        CHECK(statuses[n] == expected);
+        CHECK(bounded_price(inputs_of(rows[n]), &bounded) == expected);
+        CHECK(reference_price(inputs_of(rows[n]), &exact) == expected);
+        CHECK(reference_greeks(inputs_of(rows[n]), &risk) == expected);
+        CHECK(price(inputs_of(rows[n]), &fast) == expected);
+        CHECK(same(bounded.value, fast) && same(risk.value, exact));
+        if (n == 3) {
+            CHECK(same(bounded.value, UNTOUCHED) && same(bounded.error_bound, UNTOUCHED) && same(exact, UNTOUCHED));
+            CHECK(isnan(values[n]) && isnan(bounds[n]));
+        } else {
+            CHECK(same(values[n], bounded.value) && same(bounds[n], bounded.error_bound));
+            CHECK(fabs(fast - exact) <= bounded.error_bound && bounded.error_bound < 1e-10);
+        }
+    }
+    double exact = UNTOUCHED;
+    CHECK(bounded_price(GOOD, NULL) == FLOODMARK_STATUS_NULL_POINTER);
+    CHECK(reference_price(GOOD, NULL) == FLOODMARK_STATUS_NULL_POINTER);
+    CHECK(reference_greeks(GOOD, NULL) == FLOODMARK_STATUS_NULL_POINTER);
+    CHECK(reference_price(GOOD, &exact) == FLOODMARK_STATUS_OK && exact > 0.0);
+}
+
 int main(void) {
     print_claims();
     a_good_contract_is_answered();
@@ -466,6 +521,7 @@ int main(void) {
     a_missing_column_is_refused_before_anything_is_written();
     a_book_without_rows_needs_no_columns();
     a_law_answers_one_by_one_and_in_columns();
+    a_price_is_within_its_bound_of_the_reference();
     every_contract_has_a_text_that_leads_back();
     a_rebate_is_paid_at_hit_at_expiry_or_as_is_natural();
     a_text_that_does_not_fit_is_not_cut();
