@@ -28,6 +28,9 @@
 #![no_std]
 #![deny(unsafe_code)]
 
+#[doc = include_str!("../ACCURACY.md")]
+#[doc = include_str!("../accuracy.svg")]
+pub mod accuracy {}
 pub mod batch;
 pub mod brownian;
 mod error;

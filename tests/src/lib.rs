@@ -1,6 +1,7 @@
 //! What the tests of every language share: where things are, and how to run a program.
 
 pub mod python;
+pub mod registry;
 
 use std::path::{Path, PathBuf};
 use std::process::Command;
