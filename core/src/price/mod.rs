@@ -17,6 +17,9 @@ mod setting;
 mod strip;
 mod valuation;
 
+#[cfg(test)]
+mod tests;
+
 pub use bound::{BoundedPrice, bounded_price};
 pub use greeks::Greeks;
 pub use profile::{BarrierProfile, barrier_profile};
