@@ -23,7 +23,7 @@ const TAIL: f64 = 4.0;
 const INTEGRAL: f64 = 16.0;
 /// The steepest that the logarithm of an integral can be in the place of its Gaussian: half the Gaussian's reach.
 const STEEPEST: f64 = 10.0;
-/// Nothing is known below the smallest positive number.
+/// Nothing is known of a density below the smallest positive number, and amounts multiply it.
 const UNDERFLOW: f64 = 8.0 * f64::MIN_POSITIVE * f64::EPSILON;
 
 /// A value with a bound on its error.
@@ -76,7 +76,12 @@ pub fn bounded_price(sheet: &TermSheet, market: &Market) -> Result<BoundedPrice>
                 Pays::Now => 0.0,
             };
     }
-    Ok(BoundedPrice { value, error_bound: UNIT * error + UNDERFLOW })
+    let used = |used: bool, amount: f64| if used { amount } else { 0.0 };
+    let amounts = 1.0
+        + market.spot
+        + used(sheet.contract.has_strike(), sheet.strike)
+        + used(sheet.contract.direction().is_some(), sheet.barrier + sheet.rebate);
+    Ok(BoundedPrice { value, error_bound: UNIT * error + UNDERFLOW * amounts })
 }
 
 /// Of a payoff under an event.
