@@ -3,6 +3,9 @@
 use crate::brownian::Walk;
 use crate::special::{Functions, exp, ln};
 
+/// The factor by which the search first steps towards an open end of its bracket.
+const SHORTEST_STRIDE: f64 = 8.0;
+
 /// A distribution on the positive half-line, with both of its tails and its density.
 struct Law<F: Fn(f64) -> [f64; 3]> {
     below_above_density: F,
@@ -12,10 +15,11 @@ impl<F: Fn(f64) -> [f64; 3]> Law<F> {
     /// The point below which `probability` lies; `complement` is what lies above.
     ///
     /// Newton's method in the logarithms of point and probability, in which tails are straight; a step that leaves
-    /// the bracket is replaced by one that halves it, so the search ends whatever the shape.
+    /// the bracket is replaced by one that halves it, so the search ends whatever the shape. While the bracket has
+    /// an open end, steps towards it grow: the answer may be three hundred decades from the guess.
     fn quantile(&self, probability: f64, complement: f64, guess: f64) -> f64 {
         let (mut low, mut high) = (0.0, f64::INFINITY);
-        let mut at = guess;
+        let (mut at, mut stride) = (guess, SHORTEST_STRIDE);
         for _ in 0..300 {
             let [below, above, density] = (self.below_above_density)(at);
             // The smaller tail carries the digits.
@@ -32,13 +36,18 @@ impl<F: Fn(f64) -> [f64; 3]> Law<F> {
             let step = -ln(ratio) / steepness;
             let mut next = at * exp(step);
             if !(next > low && next < high && step.abs() < 3.0) {
+                // A long stride must not leap over the end of binary64.
+                if (at * stride).is_infinite() || at / stride == 0.0 {
+                    stride = SHORTEST_STRIDE;
+                }
                 next = if high.is_infinite() {
-                    at * 8.0
+                    at * stride
                 } else if low == 0.0 {
-                    at / 8.0
+                    at / stride
                 } else {
                     libm::sqrt(low) * libm::sqrt(high)
                 };
+                stride *= stride;
             }
             if (next - at).abs() <= f64::EPSILON * at || next == 0.0 || next.is_infinite() {
                 return next;
@@ -128,7 +137,7 @@ impl<R: Functions> Walk<R> {
 mod tests {
     use super::*;
 
-    const PROBABILITIES: [f64; 9] = [1e-250, 1e-30, 1e-6, 0.01, 0.3, 0.5, 0.9, 0.99, 1.0 - 1e-12];
+    const PROBABILITIES: [f64; 11] = [1e-305, 1e-275, 1e-250, 1e-30, 1e-6, 0.01, 0.3, 0.5, 0.9, 0.99, 1.0 - 1e-12];
 
     /// A cdf at a quantile is right to the rounding of the quantile and of what the cdf itself makes of it.
     fn inverts(probability: f64, below: f64, above: f64, steepness: f64) -> bool {
