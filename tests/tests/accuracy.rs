@@ -68,6 +68,7 @@ const NO_SEAM: [(&str, &str); 28] = [
     ("functions::NEGLIGIBLE", "where an integral ends"),
     ("extended::NEGLIGIBLE", "where an integral ends"),
     ("inverse::SHORTEST_STRIDE", "step of a search"),
+    ("seams::NEAR_BARRIER", "a budget of the tests beside the code"),
     ("bell::WIDEST_PANEL", "step of an integral"),
     ("discounted::WIDEST_PANEL", "step of an integral"),
 ];
