@@ -37,6 +37,11 @@ pub(crate) struct Sensitivity<R> {
     pub(crate) log_barrier: R,
     /// dV/dstrike
     pub(crate) strike: R,
+    /// Of a strip: the worth of its shares and of its cash, whose difference the value is, and the part of the slope
+    /// that the jumps at its ends make.
+    pub(crate) share: R,
+    pub(crate) cash: R,
+    pub(crate) jumps: R,
     /// Whether the terms of the value cancelled, and with them those of the derivatives.
     pub(crate) delicate: bool,
 }
@@ -59,6 +64,9 @@ impl<R: Functions> Sensitivity<R> {
             dividend: zero,
             log_barrier: zero,
             strike: zero,
+            share: zero,
+            cash: zero,
+            jumps: zero,
             delicate: false,
         }
     }
@@ -67,31 +75,43 @@ impl<R: Functions> Sensitivity<R> {
     /// `p = 1 - 2 carry / vol^2`, which solves the Black-Scholes equation wherever `U` does.
     ///
     /// `self` is `U` with its derivatives at the reflected spot, every number already multiplied by the power:
-    /// the product exists where the power alone overflows.
+    /// the product exists where the power alone overflows. Shares and cash are mirrored each with its own power,
+    /// `p - 1` and `p`, as what a share loses by one it gains by the spot.
     pub(crate) fn reflected(self, setting: &Setting<R>, barrier: f64) -> Sensitivity<R> {
-        let Setting { spot, vol, carry, variance, .. } = *setting;
+        let Setting { spot, vol, rate, dividend, expiry, carry, variance, .. } = *setting;
+        let Sensitivity { share, cash, jumps, .. } = self;
         let y = R::ln_ratio(spot, barrier);
         let one = R::of(1.0);
-        let power = one - carry.times(2.0) / variance;
+        let by_share = carry.times(-2.0) / variance;
+        let by_cash = one + by_share;
         let tilt_rate = y.times(-2.0) / variance;
         let power_vol = carry.times(4.0) / (variance * vol);
         let tilt = power_vol * y;
-        let tilted = tilt * self.value + self.vol;
+        let slope = by_share * share - by_cash * cash - jumps;
         let vol_vol = [(tilt - R::of(3.0) / vol) * tilt * self.value, tilt.times(2.0) * self.vol, self.vol_vol];
+        let bend = by_share * ((by_share - one) * share - by_cash * cash - jumps.times(2.0)) + self.bend;
+        let spread = (vol / expiry * self.slope_vol).times(0.5);
+        let half_variance = variance.times(0.5);
         Sensitivity {
             value: self.value,
-            slope: power * self.value - self.slope,
-            bend: power * (power - one) * self.value + (one - power).times(2.0) * self.slope + self.bend,
-            vol: tilted,
+            slope,
+            bend,
+            vol: tilt * self.value + self.vol,
             vol_vol: vol_vol[0] + vol_vol[1] + vol_vol[2],
             vol_vol_terms: vol_vol[0].magnitude() + vol_vol[1].magnitude() + self.vol_vol_terms,
-            slope_vol: power_vol * self.value + power * tilted - tilt * self.slope - self.slope_vol,
+            slope_vol: power_vol * self.value + tilt * slope + by_cash * self.vol - self.slope_vol,
             time: self.time,
-            slope_time: power * self.time - self.slope_time,
+            slope_time: by_cash * (rate * cash) - by_share * (dividend * share)
+                + (by_cash * carry + dividend) * jumps
+                + (by_cash * half_variance - carry) * self.bend
+                - spread,
             rate: tilt_rate * self.value + self.rate,
             dividend: self.dividend - tilt_rate * self.value,
-            log_barrier: self.slope.times(2.0) - power * self.value + self.log_barrier,
+            log_barrier: (one - by_share) * share + by_cash * cash + jumps.times(2.0) + self.log_barrier,
             strike: self.strike,
+            share,
+            cash,
+            jumps,
             delicate: self.delicate,
         }
     }
@@ -112,6 +132,9 @@ impl<R: Functions> Sensitivity<R> {
             dividend: self.dividend.nearest(),
             log_barrier: self.log_barrier.nearest(),
             strike: self.strike.nearest(),
+            share: self.share.nearest(),
+            cash: self.cash.nearest(),
+            jumps: self.jumps.nearest(),
             delicate: self.delicate,
         }
     }
@@ -132,6 +155,9 @@ impl<R: Functions> Sensitivity<R> {
             dividend: with(self.dividend, other.dividend),
             log_barrier: with(self.log_barrier, other.log_barrier),
             strike: with(self.strike, other.strike),
+            share: with(self.share, other.share),
+            cash: with(self.cash, other.cash),
+            jumps: with(self.jumps, other.jumps),
             delicate: self.delicate || other.delicate,
         }
     }

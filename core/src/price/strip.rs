@@ -229,6 +229,7 @@ impl<R: Functions> Strip<R> {
                 Level::Barrier => sum.log_barrier = sum.log_barrier - per_deviation * jump,
             }
         }
+        (sum.share, sum.cash, sum.jumps) = (share, cash, jumps);
         sum.slope = share + jumps;
         sum.vol = vol * expiry * sum.bend;
         sum.time = (variance * sum.bend).times(0.5) + rate * cash - dividend * share + carry * jumps;

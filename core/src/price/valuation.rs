@@ -92,7 +92,7 @@ fn settled(sheet: &TermSheet, market: &Market, setting: &Setting<f64>, value: f6
     /// Distance to the barrier in standard deviations.
     const NEAR: f64 = 0.05;
     /// Of the amounts at stake.
-    const DEEP: f64 = 1e-35;
+    const DEEP: f64 = 1e-25;
     let deep = value > 0.0 && value < DEEP * (1.0 + market.spot + sheet.rebate);
     let near = |barrier: f64| ln_ratio(barrier, market.spot).abs() < NEAR * setting.deviation;
     if deep && sheet.contract.direction().is_some() && near(sheet.barrier) {
