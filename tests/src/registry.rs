@@ -30,6 +30,7 @@ pub use budgets::{Budget, NOT_KEPT, budgets, ceiling, promised, rewritten};
 pub use errors::{Spread, difference, difference_to_decimal, ulp};
 pub use page::{page, readme_section};
 pub use picture::picture;
+pub use prices::reference_times;
 pub use sources::{named_constants, public_functions};
 
 /// A part of the domain of a function.

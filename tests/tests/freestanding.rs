@@ -4,9 +4,10 @@
 //! panic can be reached. Here it is built, linked and run, and its results are compared with ours to the bit.
 
 use std::fs;
-use std::path::{Path, PathBuf};
+use std::path::PathBuf;
 use std::process::{Command, Output};
 
+use floodmark_tests::registry::public_functions;
 use floodmark_tests::{root, run, scratch};
 
 #[path = "../freestanding/src/values.rs"]
@@ -85,45 +86,4 @@ fn a_function_counts_as_reached_under_its_whole_name_only() {
 fn mentions(text: &str, path: &str) -> bool {
     let word = |c: char| c.is_alphanumeric() || c == '_' || c == ':';
     text.match_indices(path).any(|(at, _)| !text[..at].ends_with(word) && !text[at + path.len()..].starts_with(word))
-}
-
-/// The public functions below a folder as `Type::method`, or `module::function` with the folder as the module.
-fn public_functions(folder: &Path, module: &str) -> Vec<String> {
-    let mut found = Vec::new();
-    for entry in fs::read_dir(folder).unwrap() {
-        let path = entry.unwrap().path();
-        if path.is_dir() {
-            found.extend(public_functions(&path, path.file_name().unwrap().to_str().unwrap()));
-            continue;
-        }
-        let mut owner = module.to_owned();
-        for line in fs::read_to_string(&path).unwrap().lines() {
-            if line.starts_with("impl") && !line.contains(" for ") {
-                owner = implemented(line);
-            } else if line == "}" {
-                module.clone_into(&mut owner);
-            }
-            let words: Vec<&str> = line.split_whitespace().take_while(|word| !word.starts_with("//")).collect();
-            if let (Some(&"pub"), Some(at)) = (words.first(), words.iter().position(|word| *word == "fn")) {
-                let name = words[at + 1].split(['(', '<']).next().unwrap();
-                found.push(format!("{owner}::{name}"));
-            }
-        }
-    }
-    found
-}
-
-/// The type of an `impl` line: `impl<'a, T: Copy> Column<'a, T> {` is of `Column`.
-fn implemented(line: &str) -> String {
-    let mut depth = 0;
-    let outside: String = line
-        .chars()
-        .filter(|letter| {
-            depth += i32::from(*letter == '<');
-            let kept = depth == 0;
-            depth -= i32::from(*letter == '>');
-            kept
-        })
-        .collect();
-    outside.trim_start_matches("impl").trim_end_matches('{').trim().to_owned()
 }

@@ -1,11 +1,13 @@
 //! Prices, their bounds and their Greeks, on random contracts, against the reference path.
 
+use std::time::Instant;
+
 use floodmark::price::{Greeks, bounded_price, greeks, price, reference_greeks, reference_price};
 use floodmark::terms::{Market, TermSheet};
 
 use crate::registry::contracts::{REGIONS, contract};
 use crate::registry::random::Random;
-use crate::registry::{Entry, Measurement, Region, Sample, conditioning};
+use crate::registry::{Entry, Measurement, Region, Sample, Spread, conditioning};
 
 /// Values below this are not judged: their parts may be subnormal numbers.
 const FLOOR: f64 = 1e-290;
@@ -61,6 +63,19 @@ pub(super) fn measure_prices(region: &'static Region) -> Vec<Measurement> {
         Measurement::of("price::price", "value", region, &samples),
         Measurement::of_ratios("price::bounded_price", "bound / error", region, tightness),
     ]
+}
+
+/// How long the reference path takes for a price, in microseconds, on this machine now.
+pub fn reference_times() -> Spread {
+    let mut random = Random::named("times");
+    let contracts = (0..700).map(|place| contract(&REGIONS[place % REGIONS.len()], &mut random));
+    let time = |(sheet, market): (TermSheet, Market)| {
+        let start = Instant::now();
+        // What is beyond binary64 takes its time too.
+        let _ = std::hint::black_box(reference_price(&sheet, &market));
+        start.elapsed().as_secs_f64() * 1e6
+    };
+    Spread::of(contracts.map(time).collect())
 }
 
 pub(super) fn measure_greeks(region: &'static Region) -> Vec<Measurement> {

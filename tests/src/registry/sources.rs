@@ -47,7 +47,7 @@ pub fn named_constants(folder: &Path) -> Vec<String> {
     found
 }
 
-/// Folder below the first one (if it lies in one), stem and text of every file.
+/// Folder below the first one (if it lies in one), stem and text of every file that is not of tests alone.
 fn files(folder: &Path) -> Vec<((Option<String>, String), String)> {
     let mut found = Vec::new();
     let name = |path: &Path| path.file_stem().and_then(|name| name.to_str()).expect("a plain name").to_owned();
@@ -55,6 +55,9 @@ fn files(folder: &Path) -> Vec<((Option<String>, String), String)> {
         fs::read_dir(folder).expect("a folder").map(|entry| entry.expect("a file").path()).collect();
     entries.sort();
     for path in entries {
+        if path.ends_with("tests") {
+            continue;
+        }
         if path.is_dir() {
             let inner = files(&path).into_iter();
             found.extend(inner.map(|((module, stem), text)| ((module.or_else(|| Some(name(&path))), stem), text)));
