@@ -54,6 +54,18 @@ def test_the_reference_path_broadcasts_likewise(call: Any) -> None:
         assert (bits([values if shape == () else values[index]]) == bits(alone[0])).all()
 
 
+@pytest.mark.parametrize("contract", ["up-and-out call", "down-and-in put", "down one-touch", "up no-touch"])
+def test_a_rebate_is_paid_at_the_hit_where_nothing_is_said_and_there_is_one(contract: str) -> None:
+    terms = {**GOOD, "barrier": 110.0 if contract.startswith("up") else 98.0, "rebate": 3.0, "rate": 0.1}
+    at_hit = contract in ("up-and-out call", "down one-touch")
+    expected = floodmark.price(contract, **terms, rebate_paid="hit" if at_hit else "expiry")
+    if at_hit:
+        assert expected > floodmark.price(contract, **terms, rebate_paid="expiry")
+    assert floodmark.price(contract, **terms) == expected
+    assert floodmark.price(contract, **terms, rebate_paid="") == expected
+    assert floodmark.price(contract, **terms, rebate_paid=["", None, np.nan]).tolist() == [expected] * 3
+
+
 def test_plain_numbers_give_floats_and_arrays_give_arrays() -> None:
     for number in (105.0, 105, np.float64(105.0), np.float32(105.0), np.int64(105), np.array(105.0)):
         value = floodmark.price("call", **{**GOOD, "spot": number})

@@ -5,7 +5,9 @@ import doctest
 import inspect
 import pickle
 import re
+import signal
 import threading
+import time
 from importlib import metadata
 from pathlib import Path
 from typing import Any
@@ -142,6 +144,37 @@ def test_other_threads_run_while_a_column_is_valued() -> None:
     done.set()
     watcher.join()
     assert count > 20
+
+
+def test_a_long_call_can_be_interrupted() -> None:
+    spot = np.linspace(60.0, 119.0, 400_000)
+
+    class Interrupt(Exception):
+        pass
+
+    def interrupt(*_: Any) -> None:
+        raise Interrupt
+
+    def value(spot: Any) -> float:
+        """Values the rows and says how long that took."""
+        begin = time.perf_counter()
+        try:
+            floodmark.reference_greeks("up-and-out call", **{**GOOD, "spot": spot})
+        finally:
+            seconds.append(time.perf_counter() - begin)
+        return seconds[-1]
+
+    seconds: list[float] = []
+    whole = 100 * value(spot[::100])
+    before = signal.signal(signal.SIGALRM, interrupt)
+    try:
+        signal.setitimer(signal.ITIMER_REAL, 0.05)
+        with pytest.raises(Interrupt):
+            value(spot)
+    finally:
+        signal.setitimer(signal.ITIMER_REAL, 0.0)
+        signal.signal(signal.SIGALRM, before)
+    assert seconds[-1] < whole / 4
 
 
 PUBLIC = [

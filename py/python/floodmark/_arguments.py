@@ -75,7 +75,7 @@ def numbers(name: str, given: Any) -> np.ndarray[Any, np.dtype[np.float64]]:
     elif array.dtype.kind not in "biuf":
         raise TypeError(_expected(name, given, "number"))
     found = np.asarray(array, dtype=np.float64)
-    if not found.flags.aligned:
+    if not found.flags.aligned:  # A field of a packed record: not at a whole number of elements from the next.
         found = found.copy()
     return np.where(given.mask, np.nan, found) if isinstance(given, np.ma.MaskedArray) else found
 

@@ -90,13 +90,8 @@ def _rows(shape: tuple[int, ...]) -> int:
 def _column(array: _Array, shape: tuple[int, ...]) -> _Array:
     """One axis over all the rows, or one element for all of them; copied only where more axes demand it."""
     if array.size == 1:
-        column = array.reshape(1)
-    elif array.shape == shape:
-        column = array.reshape(-1)
-    else:
-        column = np.broadcast_to(array, shape).reshape(-1)
-    # A field of a packed record may lie at whole bytes, but not at a whole number of elements from the next.
-    return column if column.strides[0] % column.itemsize == 0 else column.copy()
+        return array.reshape(1)
+    return (array if array.shape == shape else np.broadcast_to(array, shape)).reshape(-1)
 
 
 def _shaped(column: _Array, shape: tuple[int, ...]) -> Any:
