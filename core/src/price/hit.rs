@@ -148,25 +148,38 @@ impl<R: Functions> Path<R> {
         [n, first, (n_vv - n_v.times(4.0) / self.vol) / self.variance + n.times(6.0) / self.variance]
     }
 
-    /// `(drift - root) / vol^2` with its first two derivatives in volatility, by its equal
-    /// `-2 rate / (drift + root)` where drift and root have the same sign and would cancel.
+    /// `(drift - root) / vol^2` with its first two derivatives in volatility, by its equals
+    /// `-2 rate / (drift + root)` and `-2 dividend / (share_drift + root) - sign` where the root has the sign of the
+    /// one drift or the other: what would cancel is gone from each.
     fn exponent(&self, root: R, [root_v, root_vv]: [R; 2]) -> [R; 3] {
-        let Path { drift, rate, .. } = *self;
         let [drift_v, drift_vv] = self.drift_v();
-        if (drift > R::of(0.0)) == (root > R::of(0.0)) {
+        let positive = |number: R| number > R::of(0.0);
+        let quotient = |yield_: R, drift: R, drift_v: R, drift_vv: R| {
             let (sum, sum_v, sum_vv) = (drift + root, drift_v + root_v, drift_vv + root_vv);
-            let value = rate.times(-2.0) / sum;
+            let value = yield_.times(-2.0) / sum;
             let first = -value * sum_v / sum;
             [value, first, -(first.times(2.0) * sum_v + value * sum_vv) / sum]
+        };
+        if positive(self.drift) == positive(root) {
+            quotient(self.rate, self.drift, drift_v, drift_vv)
+        } else if positive(self.share_drift()) == positive(root) {
+            // In the measure of the share the drift moves the other way with the volatility.
+            let [value, first, second] = quotient(self.dividend, self.share_drift(), -drift_v, -drift_vv);
+            [value - R::of(self.sign), first, second]
         } else {
-            self.over_variance([drift - root, drift_v - root_v, drift_vv - root_vv])
+            self.over_variance([self.drift - root, drift_v - root_v, drift_vv - root_vv])
         }
+    }
+
+    /// The drift towards the barrier in the measure of the share.
+    fn share_drift(&self) -> R {
+        self.drift + self.variance.times(self.sign)
     }
 
     /// `(drift - root) / vol^2 + sign`, which is that exponent in the measure of the share, by whichever form keeps
     /// its digits: `root^2` is also `share_drift^2 + 2 dividend vol^2`.
     fn share_exponent(&self, root: R) -> R {
-        let share_drift = self.drift + self.variance.times(self.sign);
+        let share_drift = self.share_drift();
         if (share_drift > R::of(0.0)) == (root > R::of(0.0)) {
             self.dividend.times(-2.0) / (share_drift + root)
         } else {
@@ -183,10 +196,11 @@ impl<R: Functions> Path<R> {
         let root_v = (drift * drift_v + (rate * vol).times(2.0)) / root;
         let root_vv = (drift_v.square() + drift * drift_vv + rate.times(2.0) - root_v.square()) / root;
         let [slope, slope_v, slope_vv] = self.exponent(root, [root_v, root_vv]);
+        let by_share = self.share_exponent(root);
         let exponent = Chain {
             h: slope,
             v: distance * slope_v,
-            rate: -distance * (one + slope.times(sign)) / root,
+            rate: -distance * by_share.times(sign) / root,
             dividend: distance * slope.times(sign) / root,
             hv: slope_v,
             vv: distance * slope_vv,
@@ -219,7 +233,6 @@ impl<R: Functions> Path<R> {
             hv: second(Pair::Hv),
             vv: second(Pair::Vv),
         };
-        let by_share = self.share_exponent(root);
         Gradient {
             first_and_mixed: chain,
             bend: term * (slope * by_share) + passage.density * z_chain.h * (slope + by_share - z * z_chain.h),
