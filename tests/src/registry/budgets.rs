@@ -37,12 +37,7 @@ pub fn promised((function, answer, region): &Key) -> Budget {
 }
 
 /// Promises that are not kept yet, by function and region, with what is promised until they are.
-pub const NOT_KEPT: [(&str, &str, Budget); 2] = [
-    // Derivatives that cancel without their terms being compared: a knock-in share, a rebate at hit.
-    ("price::greeks", "huge total vol", Budget { ulp: None, conditioned: Some(8192.0) }),
-    // Deep tails, though not as deep as where the reference path takes over.
-    ("price::price", "near barrier", Budget { ulp: Some(512.0), conditioned: Some(16.0) }),
-];
+pub const NOT_KEPT: [(&str, &str, Budget); 0] = [];
 
 /// What is promised, or what is until that is kept.
 pub fn ceiling(key: &Key) -> Budget {
