@@ -75,9 +75,7 @@ impl Entry {
 pub(crate) struct Sample {
     /// Magnitude of the difference.
     difference: f64,
-    /// The magnitude of the exact answer.
-    magnitude: f64,
-    /// The unit in its last place.
+    /// The unit in the last place of the exact answer.
     ulp: f64,
     /// What the inputs' own roundings could make of it, if known: the answer, and inputs times slopes, in magnitude.
     scale: Option<f64>,
@@ -88,14 +86,13 @@ pub(crate) struct Sample {
 impl Sample {
     fn new(found: f64, exact: f64, scale: f64, line: &str) -> Sample {
         let line = format!("{found:e} for {exact:e}: {line}");
-        let (difference, magnitude) = (difference(found, exact), exact.abs());
-        Sample { difference, magnitude, ulp: ulp(exact), scale: Some(scale), line }
+        Sample { difference: difference(found, exact), ulp: ulp(exact), scale: Some(scale), line }
     }
 
     fn of_decimal(found: f64, exact: &str, line: &str) -> Sample {
-        let (difference, line) = (difference_to_decimal(found, exact), format!("{found:e} for {exact}: {line}"));
-        let exact: f64 = exact.parse().unwrap_or(f64::NAN);
-        Sample { difference, magnitude: exact.abs(), ulp: ulp(exact), scale: None, line }
+        let ulp = ulp(exact.parse().unwrap_or(f64::NAN));
+        let line = format!("{found:e} for {exact}: {line}");
+        Sample { difference: difference_to_decimal(found, exact), ulp, scale: None, line }
     }
 
     fn conditioned(self, scale: f64) -> Sample {
@@ -104,10 +101,6 @@ impl Sample {
 
     fn in_ulp(&self) -> f64 {
         if self.difference == 0.0 { 0.0 } else { self.difference / self.ulp }
-    }
-
-    fn relative(&self) -> f64 {
-        if self.difference == 0.0 { 0.0 } else { self.difference / self.magnitude }
     }
 
     fn in_conditioned_units(&self) -> f64 {
@@ -125,10 +118,8 @@ pub struct Measurement {
     pub ulp: Spread,
     /// In units of 2^-52 of the answer and its inputs' shares, if they are known.
     pub conditioned: Option<Spread>,
-    /// The largest relative error.
-    pub relative: f64,
-    /// The rows that are worst off: in units of the last place, relatively, in conditioned units.
-    pub worst: [String; 3],
+    /// The rows that are worst off, in either unit.
+    pub worst: [String; 2],
 }
 
 impl Measurement {
@@ -140,8 +131,7 @@ impl Measurement {
         };
         Measurement {
             key: (function.to_owned(), answer.to_owned(), region.name.to_owned()),
-            worst: [worst(Sample::in_ulp), worst(Sample::relative), worst(Sample::in_conditioned_units)],
-            relative: samples.iter().map(Sample::relative).fold(0.0, f64::max),
+            worst: [worst(Sample::in_ulp), worst(Sample::in_conditioned_units)],
             ulp: Spread::of(samples.iter().map(Sample::in_ulp).collect()),
             conditioned: known.then(|| Spread::of(samples.iter().map(Sample::in_conditioned_units).collect())),
         }
@@ -149,7 +139,7 @@ impl Measurement {
 
     fn of_ratios(function: &str, answer: &str, region: &Region, ratios: Vec<f64>) -> Measurement {
         let key = (function.to_owned(), answer.to_owned(), region.name.to_owned());
-        Measurement { key, ulp: Spread::of(ratios), relative: 0.0, conditioned: None, worst: Default::default() }
+        Measurement { key, ulp: Spread::of(ratios), conditioned: None, worst: [String::new(), String::new()] }
     }
 }
 

@@ -121,7 +121,6 @@ fn budgets_are_kept_and_close_and_the_published_tables_are_true() {
             MEASURED.iter().filter(|((of, _, place), _)| (of.as_str(), place.as_str()) == (function, region));
         let kept = |(key, found): (&Key, &Measurement)| {
             promised(key).ulp.is_none_or(|promise| found.judged_ulp() <= promise)
-                && promised(key).relative.is_none_or(|promise| found.relative <= promise)
                 && promised(key).conditioned.is_none_or(|promise| found.judged_conditioned() <= promise)
         };
         assert!(!there.all(kept), "{function}, {region}: kept by now, so let it be promised");
@@ -145,7 +144,6 @@ fn beyond(key: &Key, measurement: &Measurement) -> Vec<String> {
     let (budget, promise) = (budgets()[key], ceiling(key));
     let units = [
         ("ulp", budget.ulp, promise.ulp, measurement.judged_ulp(), &measurement.worst[0]),
-        ("relative", budget.relative, promise.relative, measurement.relative, &measurement.worst[1]),
         (
             "conditioned units",
             budget.conditioned,
@@ -159,7 +157,7 @@ fn beyond(key: &Key, measurement: &Measurement) -> Vec<String> {
         failures.push(format!("{key:?} has {} rows only", measurement.ulp.rows()));
     }
     for (unit, budget, promise, found, worst) in units {
-        let mut fail = |text: String| failures.push(format!("{key:?} {text} {unit}, measured {found:.3e}: {worst}"));
+        let mut fail = |text: String| failures.push(format!("{key:?} {text} {unit}, measured {found:.3}: {worst}"));
         match (budget, promise) {
             (None, None) => {}
             (Some(budget), Some(promise)) => {
@@ -167,8 +165,7 @@ fn beyond(key: &Key, measurement: &Measurement) -> Vec<String> {
                     fail(format!("budget {budget} above the promise of {promise}"));
                 }
                 // Budgets have two decimals.
-                let rounding = if unit == "relative" { 0.0 } else { 0.01 };
-                if budget > 2.0 * found + rounding {
+                if budget > 2.0 * found + 0.01 {
                     fail(format!("more than twice too generous budget of {budget}"));
                 }
                 if found.is_nan() || found > budget {

@@ -50,7 +50,6 @@ pub fn page(measured: &BTreeMap<Key, Measurement>) -> String {
             }
         }
     }
-    relatives(&mut text, measured);
     bounds(&mut text, measured);
     not_kept(&mut text);
     text
@@ -87,17 +86,6 @@ fn row(text: &mut String, key: &Key, measurement: &Measurement) {
     writeln!(text, "| {name} | {region} | {} | {ulp} | {conditioned} |", measurement.ulp.rows()).expect(TAKES);
 }
 
-fn relatives(text: &mut String, measured: &BTreeMap<Key, Measurement>) {
-    text.push_str("\n## Relative errors near the barrier\n\nWhatever the conditioning:\n\n| function | region | rows | max | budget |\n|---|---|--:|--:|--:|\n");
-    for (key, budget) in budgets() {
-        if let (Some(budget), Some(measurement)) = (budget.relative, measured.get(&key)) {
-            let (rows, found) = (measurement.ulp.rows(), measurement.relative);
-            writeln!(text, "| `{}` `{}` | {} | {rows} | {found:.1e} | {budget:.1e} |", key.0, key.1, key.2)
-                .expect(TAKES);
-        }
-    }
-}
-
 fn bounds(text: &mut String, measured: &BTreeMap<Key, Measurement>) {
     text.push_str(
         "\n## Error bound\n\n`price::bounded_price`: the bound holds in every row of prices; how many times it \
@@ -121,7 +109,7 @@ fn not_kept(text: &mut String) {
         let key = ((*function).to_owned(), String::new(), (*region).to_owned());
         let told = |budget: Budget| {
             let of = |unit: Option<f64>, name: &str| unit.map(|unit| format!("{} {name}", number(unit)));
-            let units = [of(budget.ulp, "ulp"), of(budget.relative, "relative"), of(budget.conditioned, "conditioned")];
+            let units = [of(budget.ulp, "ulp"), of(budget.conditioned, "conditioned")];
             units.into_iter().flatten().collect::<Vec<_>>().join(", ")
         };
         writeln!(text, "| `{function}` | {region} | {} | {} |", told(promised(&key)), told(*until)).expect(TAKES);
