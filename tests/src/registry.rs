@@ -26,7 +26,7 @@ use std::sync::atomic::{AtomicUsize, Ordering};
 
 use floodmark::brownian::Quantity;
 
-pub use budgets::{Budget, NOT_KEPT, budgets, ceiling, promised, rewritten};
+pub use budgets::{Budget, budgets, promised, rewritten};
 pub use errors::{Spread, difference, difference_to_decimal, ulp};
 pub use page::{page, readme_section};
 pub use picture::picture;

@@ -9,8 +9,8 @@ use std::path::PathBuf;
 use std::sync::LazyLock;
 
 use floodmark_tests::registry::{
-    Key, Measurement, NOT_KEPT, budgets, ceiling, entries, measure, named_constants, page, picture, promised,
-    public_functions, readme_section, reference_times, rewritten,
+    Key, Measurement, budgets, entries, measure, named_constants, page, picture, promised, public_functions,
+    readme_section, reference_times, rewritten,
 };
 use floodmark_tests::root;
 
@@ -116,15 +116,6 @@ fn budgets_are_kept_and_close_and_the_published_tables_are_true() {
     assert_eq!(declared, MEASURED.keys().cloned().collect(), "what is declared, and what is measured");
     assert_eq!(declared, budgets().into_keys().collect(), "what is declared, and what has a budget");
     let failures: Vec<String> = MEASURED.iter().flat_map(|(key, measurement)| beyond(key, measurement)).collect();
-    for (function, region, _) in NOT_KEPT {
-        let mut there =
-            MEASURED.iter().filter(|((of, _, place), _)| (of.as_str(), place.as_str()) == (function, region));
-        let kept = |(key, found): (&Key, &Measurement)| {
-            promised(key).ulp.is_none_or(|promise| found.judged_ulp() <= promise)
-                && promised(key).conditioned.is_none_or(|promise| found.judged_conditioned() <= promise)
-        };
-        assert!(!there.all(kept), "{function}, {region}: kept by now, so let it be promised");
-    }
     let stale: Vec<PathBuf> =
         published().into_iter().filter(|(path, text)| !said(path, text, &bless)).map(|it| it.0).collect();
     assert!(failures.is_empty(), "{} budgets are not kept or not close:\n{}", failures.len(), failures.join("\n"));
@@ -141,7 +132,7 @@ fn the_reference_path_typically_takes_less_than_a_millisecond() {
 
 /// What is wrong with the budgets of one measurement.
 fn beyond(key: &Key, measurement: &Measurement) -> Vec<String> {
-    let (budget, promise) = (budgets()[key], ceiling(key));
+    let (budget, promise) = (budgets()[key], promised(key));
     let units = [
         ("ulp", budget.ulp, promise.ulp, measurement.judged_ulp(), &measurement.worst[0]),
         (

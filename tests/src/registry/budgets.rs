@@ -36,15 +36,6 @@ pub fn promised((function, answer, region): &Key) -> Budget {
     }
 }
 
-/// Promises that are not kept yet, by function and region, with what is promised until they are.
-pub const NOT_KEPT: [(&str, &str, Budget); 0] = [];
-
-/// What is promised, or what is until that is kept.
-pub fn ceiling(key: &Key) -> Budget {
-    let open = NOT_KEPT.iter().find(|(function, region, _)| (*function, *region) == (key.0.as_str(), key.2.as_str()));
-    open.map_or_else(|| promised(key), |(_, _, budget)| *budget)
-}
-
 /// The budgets of `budgets.csv`.
 ///
 /// # Panics
@@ -73,12 +64,12 @@ impl Measurement {
     }
 }
 
-/// The text of `budgets.csv` with a quarter more than what was measured, but never more than the ceiling.
+/// The text of `budgets.csv` with a quarter more than what was measured, but never more than what is promised.
 pub fn rewritten(measured: &BTreeMap<Key, Measurement>) -> String {
     let mut text = "function,answer,region,ulp,conditioned\n".to_owned();
     for key in entries().iter().flat_map(|entry| entry.keys().collect::<Vec<_>>()) {
         let Some(measurement) = measured.get(&key) else { continue };
-        let promise = ceiling(&key);
+        let promise = promised(&key);
         let cell = |promise: Option<f64>, found: f64| {
             promise.map_or(String::new(), |promise| format!("{:.2}", (1.25 * found).min(promise.floor())))
         };

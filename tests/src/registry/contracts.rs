@@ -18,8 +18,11 @@ pub(super) const NEAR: Region = Region {
     name: "near barrier",
     domain: "contracts with a barrier; as broad, the barrier 1e-8 … 1e-2 standard deviations away, strike within 50 %",
 };
-pub(super) const CLOSING: Region =
-    Region { name: "strike near barrier", domain: "as broad, the strike 1e-14 … 1e-2 inside the barrier" };
+pub(super) const CLOSING: Region = Region {
+    name: "strike near barrier",
+    domain: "contracts with barrier and strike; vol 10 … 200 %, expiry a day … 5 years, rates -20 … 20 %, barrier \
+             0.01 … 3 standard deviations away, strike inside it by 1e-12 … 1e-2 of the way",
+};
 pub(super) const QUIET: Region = Region {
     name: "small total vol",
     domain: "total vol 1e-6 … 1e-2, barrier 0.01 … 6 standard deviations away, strike within 5 of the forward",

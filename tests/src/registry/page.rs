@@ -3,7 +3,7 @@
 use std::collections::BTreeMap;
 use std::fmt::Write;
 
-use crate::registry::{Budget, Key, Measurement, NOT_KEPT, Region, Spread, budgets, contracts, entries, law, promised};
+use crate::registry::{Key, Measurement, Region, Spread, budgets, contracts, entries, law};
 
 const INTRODUCTION: &str = "\
 # Accuracy
@@ -51,7 +51,6 @@ pub fn page(measured: &BTreeMap<Key, Measurement>) -> String {
         }
     }
     bounds(&mut text, measured);
-    not_kept(&mut text);
     text
 }
 
@@ -94,25 +93,6 @@ fn bounds(text: &mut String, measured: &BTreeMap<Key, Measurement>) {
     for (key, measurement) in contracts::REGIONS.iter().map(|region| bound(measured, region)) {
         let Spreads { rows, median, most } = Spreads::of(&measurement.ulp);
         writeln!(text, "| {} | {rows} | {median} | {most} |", key.2).expect(TAKES);
-    }
-}
-
-fn not_kept(text: &mut String) {
-    let mut lines = NOT_KEPT.iter().peekable();
-    if lines.peek().is_none() {
-        return;
-    }
-    text.push_str(
-        "\n## Promises not kept yet\n\n| function | region | promised | allowed until then |\n|---|---|--:|--:|\n",
-    );
-    for (function, region, until) in lines {
-        let key = ((*function).to_owned(), String::new(), (*region).to_owned());
-        let told = |budget: Budget| {
-            let of = |unit: Option<f64>, name: &str| unit.map(|unit| format!("{} {name}", number(unit)));
-            let units = [of(budget.ulp, "ulp"), of(budget.conditioned, "conditioned")];
-            units.into_iter().flatten().collect::<Vec<_>>().join(", ")
-        };
-        writeln!(text, "| `{function}` | {region} | {} | {} |", told(promised(&key)), told(*until)).expect(TAKES);
     }
 }
 
