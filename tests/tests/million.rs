@@ -132,7 +132,7 @@ fn examine(dice: &mut Dice, findings: &mut Findings) {
         }
     }
     // Every sixteenth with its Greeks, whose value must be the price's to the bit.
-    if findings.contracts % 16 == 0 {
+    if findings.contracts.is_multiple_of(16) {
         let risk = greeks(&sheet, &market).unwrap();
         if risk.value.to_bits() != found.0.to_bits() || risk.to_array().into_iter().any(f64::is_nan) {
             findings.wrong.push(("Greeks disagree or are NaN", format!("{risk:?} {sheet:?} {market:?}")));
