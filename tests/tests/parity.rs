@@ -1,4 +1,4 @@
-//! The same vectors through Rust and C, one by one and in columns, equal to the bit; Python reads them too (`tests/python`).
+//! The same vectors through Rust and C, one by one and in columns, equal to the bit; `tests/python` reads them too.
 //!
 //! `tests/vectors/parity.csv` is the one file that every language reads. After the header line each line is a row of
 //! one of two kinds, and cells that its kind has no use for are empty:
