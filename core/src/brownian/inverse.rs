@@ -77,13 +77,16 @@ impl<R: Functions> Walk<R> {
         let guess = walk.deviation + walk.mean.max(0.0);
         let mut level = R::of(law.quantile(probability.nearest(), complement.nearest(), guess));
         if R::POLISHED {
+            // In deviations, since in a huge unit of length a density underflows.
+            let unit = Walk::new(self.mean / self.deviation, R::of(1.0), R::of(1.0));
             for _ in 0..2 {
                 let excess = if probability < complement {
                     self.max_cdf(level) - probability
                 } else {
                     complement - self.max_tail(level)
                 };
-                level = level - excess / self.max_pdf(level).larger(R::of(f64::MIN_POSITIVE));
+                let slope = unit.max_pdf(level / self.deviation).larger(R::of(f64::MIN_POSITIVE));
+                level = level - excess / slope * self.deviation;
             }
         }
         level
@@ -126,7 +129,9 @@ impl<R: Functions> Walk<R> {
                 } else {
                     complement - then.max_cdf(distance)
                 };
-                time = time - excess / walk.first_passage_pdf(distance, time).larger(R::of(f64::MIN_POSITIVE));
+                let unit = Walk::new(then.mean / then.deviation, R::of(1.0), R::of(1.0));
+                let slope = unit.first_passage_pdf(distance / then.deviation, R::of(1.0));
+                time = time - excess / slope.larger(R::of(f64::MIN_POSITIVE)) * time;
             }
         }
         time
@@ -136,6 +141,7 @@ impl<R: Functions> Walk<R> {
 #[cfg(test)]
 mod tests {
     use super::*;
+    use crate::num::{DoubleDouble, Real};
 
     const PROBABILITIES: [f64; 11] = [1e-305, 1e-275, 1e-250, 1e-30, 1e-6, 0.01, 0.3, 0.5, 0.9, 0.99, 1.0 - 1e-12];
 
@@ -193,5 +199,23 @@ mod tests {
         assert_eq!([0.0, 1.0].map(|p| walk.terminal_quantile(p)), [f64::NEG_INFINITY, f64::INFINITY]);
         assert_eq!([0.0, 1.0].map(|p| walk.first_passage_quantile(0.5, p)), [0.0, f64::INFINITY]);
         assert_eq!(walk.first_passage_quantile(0.0, 0.7), 0.0);
+    }
+
+    /// The reference quantile does not depend on the unit of length or of time, however large.
+    #[test]
+    fn a_reference_quantile_keeps_its_digits_in_a_huge_unit() {
+        let huge = f64::from_bits((1023 + 240) << 52);
+        let walk = |unit: f64, time: f64| {
+            let [drift, vol] = [-0.3 * unit / time, 0.7 * unit / libm::sqrt(time)].map(DoubleDouble::of);
+            Walk::new(drift, vol, DoubleDouble::of(2.0 * time))
+        };
+        for exponent in [230, 250, 270] {
+            let small = DoubleDouble::of(libm::ldexp(1.0, -3 * exponent));
+            let whole = DoubleDouble::of(1.0);
+            let level = |unit: f64| walk(unit, 1.0).max_quantile(whole - small, small).nearest() / unit;
+            assert_eq!(level(huge), level(1.0), "2^-{exponent}");
+            let time = |time: f64| walk(1.0, time).first_passage_quantile(whole, small).nearest() / time;
+            assert_eq!(time(huge), time(1.0), "2^-{exponent}");
+        }
     }
 }

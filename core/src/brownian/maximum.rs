@@ -10,7 +10,7 @@
 //! cancels, in integrating the density of the end times the probability that the path stayed below,
 //! `1 - exp(-2 a (a - x) / s^2)`.
 
-use crate::brownian::{Bell, Edge, Shoulder, Sides, Survival, Walk, density};
+use crate::brownian::{Bell, Edge, Shoulder, Sides, Survival, Walk, density, from_exponent, half_of_underflow};
 use crate::special::{Functions, mills_slope};
 
 /// Probabilities are conditioned better than prices are: the integral takes over this much earlier.
@@ -24,7 +24,11 @@ impl<R: Functions> Walk<R> {
 
     /// All the mass of the image law.
     fn image_weight(&self, level: R) -> R {
-        (level.times(2.0) * (self.drift / self.vol.square())).exp()
+        self.image_weight_exponent(level).exp()
+    }
+
+    fn image_weight_exponent(&self, level: R) -> R {
+        level.times(2.0) * (self.drift / self.vol.square())
     }
 
     /// The mass of the image law on both sides of a point.
@@ -34,8 +38,13 @@ impl<R: Functions> Walk<R> {
 
     /// Standard normal density of the image law at a point.
     fn image_density(&self, level: R, at: R) -> R {
+        density(self.image_exponent(level, at))
+    }
+
+    /// The exponent of that density.
+    fn image_exponent(&self, level: R, at: R) -> R {
         let reflection = (level / self.deviation) * ((level - at) / self.deviation);
-        density(self.score(at).square().times(-0.5) - reflection.times(2.0))
+        self.score(at).square().times(-0.5) - reflection.times(2.0)
     }
 
     /// `P(M_T >= level)`
@@ -60,13 +69,28 @@ impl<R: Functions> Walk<R> {
         }
         let score = (level + self.mean) / self.deviation;
         let drift = self.mean / self.deviation;
-        let density = self.image_density(level, level);
+        let exponent = self.image_exponent(level, level);
         if self.mean > zero {
             // 1 - drift R(score), as a sum of positive terms.
             let far = level / self.deviation * score.mills() + mills_slope(score);
-            density.times(2.0) * far / self.deviation
-        } else {
-            (density - drift * self.image(level, level).below).times(2.0) / self.deviation
+            return from_exponent(exponent, |gaussian| {
+                (R::inv_root_two_pi() * gaussian).times(2.0) * far / self.deviation
+            });
+        }
+        if score > zero {
+            return from_exponent(exponent, |gaussian| {
+                let density = R::inv_root_two_pi() * gaussian;
+                (density - drift * (density * score.mills())).times(2.0) / self.deviation
+            });
+        }
+        // Most of the image lies below.
+        let sum = |weight: R, density: R| {
+            (density - drift * (weight - density * score.magnitude().mills())).times(2.0) / self.deviation
+        };
+        let weight = self.image_weight(level);
+        match half_of_underflow(self.image_weight_exponent(level), weight) {
+            Some(half) => sum(half, half * density(score.square().times(-0.5))) * half,
+            None => sum(weight, density(exponent)),
         }
     }
 
@@ -95,7 +119,9 @@ impl<R: Functions> Walk<R> {
             return zero;
         }
         let way = (level.times(2.0) - terminal) / self.deviation;
-        self.image_density(level, terminal).times(2.0) * way / self.deviation / self.deviation
+        from_exponent(self.image_exponent(level, terminal), |gaussian| {
+            (R::inv_root_two_pi() * gaussian).times(2.0) * way / self.deviation / self.deviation
+        })
     }
 
     /// `P(W_T >= terminal, M_T >= level)`

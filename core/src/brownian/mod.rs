@@ -20,4 +20,4 @@ pub(crate) use discounted::{DiscountedPassage, Form};
 pub use law::Law;
 pub use quantity::Quantity;
 pub(crate) use strip::{Edge, Sides, density};
-pub(crate) use walk::Walk;
+pub(crate) use walk::{Walk, from_exponent, half_of_underflow};

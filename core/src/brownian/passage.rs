@@ -1,6 +1,6 @@
 //! The time at which a level is first touched.
 
-use crate::brownian::{DiscountedPassage, Walk, density};
+use crate::brownian::{DiscountedPassage, Walk, from_exponent};
 use crate::special::Functions;
 
 impl<R: Functions> Walk<R> {
@@ -16,7 +16,9 @@ impl<R: Functions> Walk<R> {
             return zero;
         }
         let (walk, distance) = self.until(time).towards(level);
-        density(walk.score(distance).square().times(-0.5)) * (distance / walk.deviation) / time
+        from_exponent(walk.score(distance).square().times(-0.5), |gaussian| {
+            R::inv_root_two_pi() * gaussian * (distance / walk.deviation) / time
+        })
     }
 
     /// `P(tau <= time)`
